@@ -1,0 +1,80 @@
+// Package fastener holds what a catalogue of fasteners and materials knows:
+// ISO metric threads, heads, nuts, washers, clearance holes, property classes
+// and the materials of clamped parts. Its tables are embedded CSV files with a
+// source column; what a standard computes (thread geometry) is computed.
+//
+// In: a designation as the trade writes it ("M12x1.25", "hexagon flange",
+// "10.9", "EN-GJL-250"). Out: plain dimensions in mm, N and MPa. It never
+// guesses: an unknown designation is an UnknownError that lists what is known.
+package fastener
+
+import "fmt"
+
+// UnknownError says that a designation is not in a table.
+type UnknownError struct {
+	Kind  string   // what was looked up: "thread", "material", ...
+	Name  string   // the designation that was asked for
+	Known []string // every designation of that kind, in table order
+}
+
+// Error names the kind and the designation; the known ones are left to the
+// caller, who knows how much room there is.
+func (e *UnknownError) Error() string {
+	return fmt.Sprintf("unknown %s %q", e.Kind, e.Name)
+}
+
+// Head is a bolt head of one size, from its product standard.
+type Head struct {
+	Kind             string  // "hexagon", "hexagon flange", "socket cap"
+	Standard         string  // product standard, for example "ISO 4014"
+	BearingDiameter  float64 // d_W, mm: smallest outer diameter of the bearing face
+	Height           float64 // k, mm, nominal
+	WidthAcrossFlats float64 // s, mm: spanner size, or hexagon key size of a socket cap head
+	Source           string  // table and mark of the row
+}
+
+// Nut is a nut of one size, from its product standard.
+type Nut struct {
+	Kind             string  // "hexagon", "hexagon flange"
+	Standard         string  // product standard, for example "ISO 4032"
+	BearingDiameter  float64 // d_W, mm: smallest outer diameter of the bearing face
+	Height           float64 // m, mm: least height (m min), so the thread that is surely there
+	WidthAcrossFlats float64 // s, mm
+	Source           string
+}
+
+// Washer is a plain washer of one size, from its product standard.
+type Washer struct {
+	Standard         string  // "ISO 7089"
+	InnerDiameter    float64 // d1, mm
+	OuterDiameter    float64 // d2, mm
+	Thickness        float64 // h, mm
+	HardnessHV       float64 // hardness class
+	LimitingPressure float64 // p_G, MPa, of the washer's own steel
+	Modulus          float64 // E, MPa
+	Expansion        float64 // alpha, 1/K
+	Source           string
+}
+
+// PropertyClass is the strength of a bolt, ISO 898-1, at one thread size.
+type PropertyClass struct {
+	Name            string  // "8.8"
+	TensileStrength float64 // R_m min, MPa
+	YieldStrength   float64 // R_p0.2 min (R_eL where the class has one), MPa
+	ProofStress     float64 // S_p, MPa
+	ShearRatio      float64 // tau_B/R_m, VDI 2230-1
+	Modulus         float64 // E_S, MPa
+	Expansion       float64 // alpha_S, 1/K
+	Source          string
+}
+
+// Material is the material of a clamped or tapped part.
+type Material struct {
+	Name             string
+	Modulus          float64 // E, MPa
+	LimitingPressure float64 // p_G, MPa; 0: not known
+	Expansion        float64 // alpha, 1/K
+	ShearStrength    float64 // tau_B, MPa; 0: not known
+	TensileStrength  float64 // R_m min, MPa; 0: not known
+	Source           string
+}

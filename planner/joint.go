@@ -1,0 +1,152 @@
+package planner
+
+import (
+	"clampback/planner/fastener"
+	"clampback/planner/pattern"
+	"clampback/planner/quantity"
+)
+
+// Joint is one bolted joint as a joint engineer states it: everything looked
+// up, all numbers in N, mm, MPa, N.mm, degC. A field that the register may
+// leave out has a zero value that means "not stated"; Work then takes the
+// usual value and says so in the plan's assumptions.
+type Joint struct {
+	Assembly   string // the machine or plant the joint belongs to
+	Revision   string // of the register
+	PreparedBy string
+
+	ID    string // letters, digits, . _ -; names the output files
+	Name  string
+	Count int // number of bolts
+
+	Pattern pattern.Pattern // where the bolts sit; zero: not stated
+	Bolt    Bolt
+	Nut     *fastener.Nut // nil when the bolt goes into a tapped part
+	Tapped  *Tapped       // nil when there is a nut
+
+	HeadWasher *fastener.Washer // nil: none
+	NutWasher  *fastener.Washer // nil: none
+
+	Parts     []Part  // clamped parts from the head down, without washers
+	Roughness float64 // Rz of the surfaces, mm; 0: not stated
+
+	Clamp       Clamp
+	Loads       Loads
+	Temperature *Temperature // nil: service at assembly temperature
+	Friction    Friction
+	Tightening  Tightening
+}
+
+// Bolt is the bolt of a joint.
+type Bolt struct {
+	Thread   fastener.Thread
+	Head     fastener.Head
+	Class    fastener.PropertyClass
+	Length   float64   // l, mm, from under the head to the end
+	Shank    *float64  // full-diameter length inside the grip, mm; nil: not stated
+	Segments []Segment // pieces of shank inside the grip, from the head down; instead of Shank
+}
+
+// Segment is one cylindrical piece of a bolt's shank.
+type Segment struct {
+	Length   float64 // mm
+	Diameter float64 // mm
+}
+
+// Part is one clamped part.
+type Part struct {
+	Name          string
+	Material      fastener.Material
+	Thickness     float64 // mm
+	Hole          float64 // d_h, mm
+	OuterDiameter float64 // D_A, mm: what the part offers around the bolt axis
+}
+
+// Tapped is the part that the bolt is screwed into.
+type Tapped struct {
+	Material fastener.Material
+	Depth    float64 // usable thread depth, mm
+}
+
+// Clamp is what the joint must still hold in service, per bolt.
+type Clamp struct {
+	Residual float64 // stated residual clamp force, N; 0: not stated
+
+	Transverse        float64 // F_Q, N, carried by friction; 0: none
+	Torque            float64 // M_Y about the bolt axis, N.mm, carried by friction; 0: none
+	TorqueRadius      float64 // r_a, mm: friction radius for Torque
+	InterfaceFriction float64 // mu_T: least friction of the interface; needed with Transverse or Torque
+	Interfaces        int     // q_F: slip faces that carry the load; 0: not stated
+
+	SealArea     float64 // A_D per bolt, mm2; 0: no seal
+	SealPressure float64 // p, MPa
+}
+
+// Loads is the operating force of one bolt.
+type Loads struct {
+	Axial              quantity.Range // F_A, N; negative is compression
+	IntroductionFactor *float64       // n; nil: not stated
+	Cycles             float64        // load cycles between the ends of Axial; 0: static
+}
+
+// Temperature is the temperature of the whole joint.
+type Temperature struct {
+	Assembly float64        // degC
+	Service  quantity.Range // degC
+}
+
+// Friction is the range of the coefficients of friction.
+type Friction struct {
+	Thread quantity.Range // mu_G
+	Head   quantity.Range // mu_K, of the face that turns
+	Source string         // what the range rests on, for the assumptions; "stated in the register" when only numbers are given
+}
+
+// Method names a way of tightening.
+type Method string
+
+// The methods this package plans.
+const (
+	TorqueMethod         Method = "torque"
+	TorqueAndAngleMethod Method = "torque and angle"
+)
+
+// Scatter names how the spread of the preload is found.
+type Scatter string
+
+// The ways to find the spread.
+const (
+	RangeScatter Scatter = "range" // from friction and tool ranges; the zero value means this too
+	GuideScatter Scatter = "guide" // from the guideline's tightening factor alpha_A
+)
+
+// Aim names where in the window the target lies.
+type Aim string
+
+// The aims; the zero value means AimHigh and is printed as an assumption.
+const (
+	AimHigh   Aim = "high"
+	AimMiddle Aim = "middle"
+)
+
+// Tool is the tightening tool.
+type Tool struct {
+	Name      string  // as the plant calls it; may be empty
+	Tolerance float64 // t, relative: 0.04 for 4 %
+}
+
+// Tightening is how the joint is tightened.
+type Tightening struct {
+	Method        Method
+	Scatter       Scatter
+	ScatterFactor float64 // alpha_A stated for GuideScatter; 0: the guide's upper value
+	Tool          *Tool   // nil: not stated; needed for RangeScatter
+	Utilisation   float64 // nu, of R_p0.2; 0: not stated
+	Aim           Aim
+	Step          float64 // resolution of the setting, N.mm; 0: not stated
+	Snug          float64 // snug torque as a share of the target torque; 0: not stated
+	SnugTorque    float64 // snug torque of TorqueAndAngleMethod, N.mm; 0: not stated
+	AngleStep     float64 // resolution of the angle setting, deg; 0: not stated
+	AngleTol      float64 // tolerance of the angle, deg; 0: not stated
+	ElasticSpread float64 // relative uncertainty of the compliances; 0: not stated
+}

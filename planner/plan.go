@@ -1,0 +1,111 @@
+package planner
+
+import "clampback/planner/stiffness"
+
+// Plan is what Work makes of a joint: the record of design section 5. It is a
+// plain value; keys of its JSON form carry their unit. Torques are N.m here,
+// N.mm inside the calculation.
+type Plan struct {
+	ID            string        `json:"id"`
+	Name          string        `json:"name"`
+	Count         int           `json:"count"`
+	Feasible      bool          `json:"feasible"`
+	Binds         []string      `json:"binds"` // what limits the window; of an infeasible joint, each reason
+	Stiffness     Stiffness     `json:"stiffness"`
+	WorkBack      WorkBack      `json:"work_back"`
+	Preload       Preload       `json:"preload"`
+	Torque        Torque        `json:"torque"`
+	Angle         Angle         `json:"angle"`
+	ResidualClamp ResidualClamp `json:"residual_clamp"`
+	Checks        []Check       `json:"checks"`
+	Trace         []Line        `json:"trace"`
+	Assumptions   []string      `json:"assumptions"`
+
+	Joint   Joint             `json:"-"` // what was planned
+	Diagram stiffness.Diagram `json:"-"` // points of the joint diagram
+}
+
+// Stiffness is the joint as springs.
+type Stiffness struct {
+	BoltCompliance    float64 `json:"bolt_compliance_mm_per_N"`    // delta_S
+	ClampedCompliance float64 `json:"clamped_compliance_mm_per_N"` // delta_P
+	LoadFactor        float64 `json:"load_factor"`                 // Phi
+}
+
+// WorkBack is the way from the clamp needed in service to the preload needed
+// at assembly: RequiredPreload is the sum of the lines before it.
+type WorkBack struct {
+	RequiredResidualClamp float64 `json:"required_residual_clamp_N"` // F_Kerf
+	LoadRelief            float64 `json:"load_relief_N"`             // (1 - Phi) F_Amax
+	EmbeddingLoss         float64 `json:"embedding_loss_N"`          // F_Z
+	ThermalLoss           float64 `json:"thermal_loss_N"`            // dF_Vth, a loss only
+	RequiredPreload       float64 `json:"required_preload_N"`        // F_Mreq
+}
+
+// Preload is the assembly preload. Lowest and Highest are what the target
+// torque gives at the ends of the ranges; of an infeasible joint without a
+// target, what the upper end of the torque window gives.
+type Preload struct {
+	Limit         float64 `json:"limit_N"` // F_lim
+	Lowest        float64 `json:"lowest_N"`
+	Highest       float64 `json:"highest_N"`
+	ScatterFactor float64 `json:"scatter_factor"` // Highest/Lowest
+}
+
+// Torque is the torque window and the setting inside it; Target is 0 when the
+// joint is infeasible.
+type Torque struct {
+	WindowLow  float64 `json:"window_low_Nm"`
+	Target     float64 `json:"target_Nm"`
+	WindowHigh float64 `json:"window_high_Nm"`
+}
+
+// Angle is the angle turned from snug. For torque control Low and High are a
+// window for monitoring; for torque and angle, FromSnug is the setting.
+type Angle struct {
+	SnugTorque float64 `json:"snug_torque_Nm"`
+	FromSnug   float64 `json:"from_snug_deg"`
+	Low        float64 `json:"low_deg"`
+	High       float64 `json:"high_deg"`
+}
+
+// ResidualClamp is the clamp force left in service.
+type ResidualClamp struct {
+	Lowest  float64 `json:"lowest_N"`
+	Highest float64 `json:"highest_N"`
+}
+
+// Check is one service check. Value must not exceed Limit, unless AtLeast:
+// then it must reach it. Utilisation above 1 fails either way.
+type Check struct {
+	Name        string  `json:"name"`
+	Value       float64 `json:"value"`
+	Limit       float64 `json:"limit"`
+	Unit        string  `json:"unit"`
+	Utilisation float64 `json:"utilisation"`
+	OK          bool    `json:"ok"`
+	Source      string  `json:"source"`
+	AtLeast     bool    `json:"-"`
+}
+
+// Line is one line of the calculation. Symbol is unique in a plan and is
+// spelled so that a spreadsheet can use it as a cell name (d_2, delta_P_3).
+type Line struct {
+	Symbol  string  `json:"symbol"`
+	Meaning string  `json:"meaning"`
+	Value   float64 `json:"value"`
+	Unit    string  `json:"unit"`
+	Source  string  `json:"source"`
+
+	Input bool   `json:"-"` // stated or looked up, not computed
+	Rule  string `json:"-"` // which formula of templates/calculation.csv restates the line; empty for an input
+	Index int    `json:"-"` // place in a repeated line (layer, shank piece), from 1; 0: not repeated
+}
+
+// Record is the plan record of a whole register: the JSON that
+// "clampback plan --format json" prints.
+type Record struct {
+	Assembly string `json:"assembly"`
+	Revision string `json:"revision"`
+	Joints   []Plan `json:"joints"`
+}

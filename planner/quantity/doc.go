@@ -1,0 +1,2 @@
+// Package quantity reads and prints numbers with units.
+package quantity

@@ -1,0 +1,2 @@
+// Package stiffness turns a bolt and its clamped parts into springs.
+package stiffness
