@@ -1,22 +1,16 @@
 package friction
 
 import (
-	"bytes"
-	_ "embed"
-	"encoding/csv"
-	"fmt"
-	"strconv"
+	"embed"
 	"sync"
 
 	"clampback/planner/fastener"
 	"clampback/planner/quantity"
+	"clampback/planner/table"
 )
 
-//go:embed conditions.csv
-var conditionsCSV []byte
-
-//go:embed scatter.csv
-var scatterCSV []byte
+//go:embed *.csv
+var tables embed.FS
 
 // Condition is a named state of surfaces and lubricant with its friction.
 type Condition struct {
@@ -64,13 +58,13 @@ func GuideFor(leastFriction float64) GuideScatter {
 
 var conditions = sync.OnceValue(func() []Condition {
 	var all []Condition
-	for _, r := range readTable(conditionsCSV) {
+	for _, r := range table.Read(tables, "conditions.csv") {
 		all = append(all, Condition{
-			Name:     r.text("name"),
-			Thread:   quantity.Range{Low: r.number("thread_low"), High: r.number("thread_high")},
-			Head:     quantity.Range{Low: r.number("head_low"), High: r.number("head_high")},
-			Examples: r.text("examples"),
-			Source:   r.text("source"),
+			Name:     r.Text("name"),
+			Thread:   quantity.Range{Low: r.Number("thread_low"), High: r.Number("thread_high")},
+			Head:     quantity.Range{Low: r.Number("head_low"), High: r.Number("head_high")},
+			Examples: r.Text("examples"),
+			Source:   r.Text("source"),
 		})
 	}
 	return all
@@ -78,46 +72,13 @@ var conditions = sync.OnceValue(func() []Condition {
 
 var guides = sync.OnceValue(func() []GuideScatter {
 	var all []GuideScatter
-	for _, r := range readTable(scatterCSV) {
+	for _, r := range table.Read(tables, "scatter.csv") {
 		all = append(all, GuideScatter{
-			Name:              r.text("name"),
-			Factor:            quantity.Range{Low: r.number("low"), High: r.number("high")},
-			Source:            r.text("source"),
-			leastFrictionFrom: r.number("least_friction_from"),
+			Name:              r.Text("name"),
+			Factor:            quantity.Range{Low: r.Number("low"), High: r.Number("high")},
+			Source:            r.Text("source"),
+			leastFrictionFrom: r.Number("least_friction_from"),
 		})
 	}
 	return all
 })
-
-// row is one line of an embedded table by column name.
-type row map[string]string
-
-// readTable panics on a damaged table: the tables are part of the program and
-// the tests read every one.
-func readTable(data []byte) []row {
-	r := csv.NewReader(bytes.NewReader(data))
-	r.Comment = '#'
-	records, err := r.ReadAll()
-	if err != nil {
-		panic(fmt.Sprintf("embedded friction table: %v", err))
-	}
-	var rows []row
-	for _, record := range records[1:] {
-		named := row{}
-		for i, column := range records[0] {
-			named[column] = record[i]
-		}
-		rows = append(rows, named)
-	}
-	return rows
-}
-
-func (r row) text(column string) string { return r[column] }
-
-func (r row) number(column string) float64 {
-	v, err := strconv.ParseFloat(r[column], 64)
-	if err != nil {
-		panic(fmt.Sprintf("embedded friction table, column %s: %v", column, err))
-	}
-	return v
-}

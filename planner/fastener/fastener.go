@@ -8,7 +8,10 @@
 // guesses: an unknown designation is an UnknownError that lists what is known.
 package fastener
 
-import "fmt"
+import (
+	"fmt"
+	"strings"
+)
 
 // UnknownError says that a designation is not in a table.
 type UnknownError struct {
@@ -77,4 +80,11 @@ type Material struct {
 	ShearStrength    float64 // tau_B, MPa; 0: not known
 	TensileStrength  float64 // R_m min, MPa; 0: not known
 	Source           string
+}
+
+// NutClass returns the least nut class that belongs to the bolt's: its figure
+// before the dot, ISO 898-2.
+func (c PropertyClass) NutClass() string {
+	class, _, _ := strings.Cut(c.Name, ".")
+	return class
 }

@@ -1,0 +1,50 @@
+package fastener
+
+import (
+	"fmt"
+	"strings"
+)
+
+// catalogue holds the records of one table by designation and thread size.
+type catalogue[T any] struct {
+	what  string   // "head", "nut", ...
+	kinds []string // designations in table order
+	sizes map[string][]float64
+	at    map[entry]T
+}
+
+// entry is one designation at one nominal diameter in mm.
+type entry struct {
+	kind     string
+	diameter float64
+}
+
+func newCatalogue[T any](what string) *catalogue[T] {
+	return &catalogue[T]{what: what, sizes: map[string][]float64{}, at: map[entry]T{}}
+}
+
+func (c *catalogue[T]) add(kind string, diameter float64, record T) {
+	if _, known := c.sizes[kind]; !known {
+		c.kinds = append(c.kinds, kind)
+	}
+	c.sizes[kind] = append(c.sizes[kind], diameter)
+	c.at[entry{kind, diameter}] = record
+}
+
+// find returns the record, an *UnknownError for an unknown designation, or a
+// plain error that names the sizes there are.
+func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
+	if record, found := c.at[entry{kind, t.Diameter}]; found {
+		return record, nil
+	}
+	var none T
+	sizes, known := c.sizes[kind]
+	if !known {
+		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kinds}
+	}
+	names := make([]string, len(sizes))
+	for i, d := range sizes {
+		names[i] = nominal(d)
+	}
+	return none, fmt.Errorf("no %s %q of size %s: the table has %s", c.what, kind, nominal(t.Diameter), strings.Join(names, ", "))
+}
