@@ -99,6 +99,7 @@ type Temperature struct {
 type Friction struct {
 	Thread quantity.Range // mu_G
 	Head   quantity.Range // mu_K, of the face that turns
+	State  string         // surfaces and lubricant in words, as the technician must have them; empty: not stated
 	Source string         // what the range rests on, for the assumptions; "stated in the register" when only numbers are given
 }
 

@@ -1,6 +1,12 @@
 package planner
 
-import "clampback/planner/stiffness"
+import (
+	"slices"
+	"strings"
+
+	"clampback/planner/quantity"
+	"clampback/planner/stiffness"
+)
 
 // Plan is what Work makes of a joint: the record of design section 5. It is a
 // plain value; keys of its JSON form carry their unit. Torques are N.m here,
@@ -21,8 +27,9 @@ type Plan struct {
 	Trace         []Line        `json:"trace"`
 	Assumptions   []string      `json:"assumptions"`
 
-	Joint   Joint             `json:"-"` // what was planned
-	Diagram stiffness.Diagram `json:"-"` // points of the joint diagram
+	Joint       Joint             `json:"-"` // what was planned, completed by the assumptions
+	Diagram     stiffness.Diagram `json:"-"` // points of the joint diagram
+	AngleWindow quantity.Range    `json:"-"` // where the angle setting may lie, deg; torque and angle only
 }
 
 // Stiffness is the joint as springs.
@@ -53,15 +60,17 @@ type Preload struct {
 }
 
 // Torque is the torque window and the setting inside it; Target is 0 when the
-// joint is infeasible.
+// window holds no setting. For torque and angle it is the torque to expect at
+// the end.
 type Torque struct {
 	WindowLow  float64 `json:"window_low_Nm"`
 	Target     float64 `json:"target_Nm"`
 	WindowHigh float64 `json:"window_high_Nm"`
 }
 
-// Angle is the angle turned from snug. For torque control Low and High are a
-// window for monitoring; for torque and angle, FromSnug is the setting.
+// Angle is the angle turned from snug. For torque control Low and High are what
+// a monitor should expect; for torque and angle FromSnug is the setting, 0 when
+// the joint is infeasible, and Low and High are what to accept.
 type Angle struct {
 	SnugTorque float64 `json:"snug_torque_Nm"`
 	FromSnug   float64 `json:"from_snug_deg"`
@@ -86,6 +95,8 @@ type Check struct {
 	OK          bool    `json:"ok"`
 	Source      string  `json:"source"`
 	AtLeast     bool    `json:"-"`
+	Rule        string  `json:"-"` // which line of templates/checks.csv restates the check
+	Index       int     `json:"-"` // number of the bearing face, from 1; 0: not repeated
 }
 
 // Line is one line of the calculation. Symbol is unique in a plan and is
@@ -108,4 +119,22 @@ type Record struct {
 	Assembly string `json:"assembly"`
 	Revision string `json:"revision"`
 	Joints   []Plan `json:"joints"`
+}
+
+// NewRecord gathers plans into a record. Joints from registers of several
+// assemblies or revisions name them all, in order.
+func NewRecord(plans []Plan) Record {
+	var assemblies, revisions []string
+	for _, p := range plans {
+		assemblies = appendNew(assemblies, p.Joint.Assembly)
+		revisions = appendNew(revisions, p.Joint.Revision)
+	}
+	return Record{Assembly: strings.Join(assemblies, "; "), Revision: strings.Join(revisions, "; "), Joints: plans}
+}
+
+func appendNew(list []string, s string) []string {
+	if slices.Contains(list, s) {
+		return list
+	}
+	return append(list, s)
 }

@@ -1,0 +1,120 @@
+package planner
+
+import (
+	"fmt"
+	"math"
+
+	"clampback/planner/fastener"
+)
+
+// What is taken when the register is silent. Each use is printed.
+const (
+	usualUtilisation   = 0.9  // nu, VDI 2230-1:2015 R7
+	usualStep          = 1000 // N.mm: a setting to the whole N.m
+	usualSnug          = 0.20 // of the target torque; common practice, no source
+	usualRoughness     = 0.016
+	usualAngleStep     = 5.0  // deg; common practice, no source
+	usualAngleTol      = 2.0  // deg; common practice, no source
+	usualElasticSpread = 0.10 // of the compliances; common practice, no source
+	roomTemperature    = 20.0 // degC
+)
+
+// assume completes the joint where the register is silent and says so.
+func (w *work) assume() {
+	j := &w.joint
+	t := &j.Tightening
+	take := func(missing bool, value *float64, usual float64, text string) {
+		if missing {
+			*value = usual
+			w.assumed(text)
+		}
+	}
+	if t.Method == "" {
+		t.Method = TorqueMethod
+		w.assumed("tightening method not stated: torque")
+	}
+	if t.Scatter == "" {
+		t.Scatter = RangeScatter
+	}
+	if t.Aim == "" {
+		t.Aim = AimHigh
+		w.assumed("aim not stated: high, the largest setting the joint tolerates")
+	}
+	take(t.Utilisation == 0, &t.Utilisation, usualUtilisation,
+		"utilisation not stated: 90 % of the yield strength, with torsion (VDI 2230-1)")
+	take(t.Step == 0, &t.Step, usualStep, "resolution of the torque setting not stated: 1 N.m")
+	take(t.Snug == 0 && t.SnugTorque == 0, &t.Snug, usualSnug,
+		"snug torque not stated: 20 % of the target torque (common practice, no source)")
+	take(t.ElasticSpread == 0, &t.ElasticSpread, usualElasticSpread,
+		"uncertainty of the compliances not stated: +/-10 % (common practice, no source)")
+	if t.Method == TorqueAndAngleMethod {
+		take(t.AngleStep == 0, &t.AngleStep, usualAngleStep,
+			"resolution of the angle setting not stated: 5 deg (common practice, no source)")
+		take(t.AngleTol == 0, &t.AngleTol, usualAngleTol,
+			"tolerance of the angle not stated: +/-2 deg (common practice, no source)")
+	}
+	take(j.Roughness == 0, &j.Roughness, usualRoughness, "surface roughness not stated: Rz 10 to 40 um for embedding")
+	w.assumeLoads()
+	w.assumeShank()
+	w.assumeMethod()
+}
+
+func (w *work) assumeLoads() {
+	j := &w.joint
+	if j.Loads.IntroductionFactor == nil {
+		none := 1.0
+		j.Loads.IntroductionFactor = &none
+		w.assumed("no axial load, so the load introduction factor has no effect: 1 is shown")
+	}
+	if j.Temperature == nil {
+		j.Temperature = &Temperature{Assembly: roomTemperature}
+		j.Temperature.Service.Low, j.Temperature.Service.High = roomTemperature, roomTemperature
+		w.assumed("temperature not stated: service at the temperature of assembly, 20 degC")
+	}
+	if j.Loads.Cycles == 0 && j.Loads.Axial.Width() > 0 {
+		w.assumed("load cycles not stated: the axial load is taken as static and fatigue is not checked")
+	}
+	if j.Clamp.slips() && j.Clamp.Interfaces == 0 {
+		j.Clamp.Interfaces = 1
+		w.assumed("number of slip faces not stated: 1")
+	}
+}
+
+// assumeShank takes the product standard's thread length when neither shank
+// nor segments are stated.
+func (w *work) assumeShank() {
+	b := &w.joint.Bolt
+	if b.Shank != nil || len(b.Segments) > 0 {
+		return
+	}
+	thread := fastener.ReferenceThreadLength(b.Head, b.Thread, b.Length)
+	shank := math.Min(math.Max(b.Length-thread, 0), w.joint.Grip())
+	b.Shank = &shank
+	if shank == 0 {
+		w.assumed("shank not stated: threaded to the head")
+		return
+	}
+	w.assumed(fmt.Sprintf("shank not stated: %.4g mm in the grip, from the thread length %.4g mm of %s", shank, thread, b.Head.Standard))
+}
+
+// assumeMethod says what the method takes for granted in every joint.
+func (w *work) assumeMethod() {
+	j := w.joint
+	w.assumed("loaded and clamped concentrically; loads are per bolt and need no further factor")
+	w.assumed("the bolt is turned at the head; the other end is held")
+	w.assumed("friction: " + j.Friction.Source)
+	if j.Friction.State == "" {
+		w.assumed("lubrication not stated: the friction range holds only for the state it was found with")
+	}
+	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
+	w.assumed("moduli and strengths are those at room temperature")
+	if j.Nut != nil {
+		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
+	}
+	if j.Loads.Cycles > 0 {
+		w.assumed("thread rolled before heat treatment (the lower fatigue limit)")
+	}
+	if j.Tightening.Scatter == GuideScatter {
+		w.assumed("guide scatter: the tightening factor holds friction and tool together; only the least friction sets the torque, and a stated tool tolerance is not counted again")
+	}
+}

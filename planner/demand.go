@@ -1,0 +1,36 @@
+package planner
+
+import "math"
+
+// demand works out the clamp force that must remain in service, F_Kerf: the
+// largest of friction grip, sealing and what is stated. The one-sided opening
+// force F_KA of an eccentric joint is nil here.
+func (w *work) demand() {
+	c := w.joint.Clamp
+	w.input("F_K_res", "residual clamp force, stated", c.Residual, "N", stated)
+	w.input("F_Q", "transverse load carried by friction", c.Transverse, "N", stated)
+	w.input("M_Y", "torque about the bolt axis carried by friction", c.Torque/1000, "N.m", stated)
+	w.input("r_a", "friction radius of the torque", c.TorqueRadius, "mm", stated)
+	w.input("mu_T", "least friction of the interface", c.InterfaceFriction, "-", stated)
+	w.input("q_F", "number of slip faces", float64(c.Interfaces), "-", stated)
+	w.input("A_D", "area sealed by one bolt", c.SealArea, "mm2", stated)
+	w.input("p_D", "pressure to seal", c.SealPressure, "MPa", stated)
+
+	grip := w.line("F_KQ", "clamp force for friction grip", c.frictionGrip(), "N", guideline+"R2")
+	seal := w.line("F_KP", "clamp force for sealing", c.SealArea*c.SealPressure, "N", guideline+"R2")
+	w.residualClamp = w.line("F_Kerf", "required residual clamp force",
+		math.Max(c.Residual, math.Max(grip, seal)), "N", guideline+"R2")
+}
+
+// frictionGrip returns F_KQ = F_Q/(q_F mu_T) + M_Y/(q_M r_a mu_T), N.
+func (c Clamp) frictionGrip() float64 {
+	if !c.slips() {
+		return 0
+	}
+	grip := c.InterfaceFriction * float64(c.Interfaces) // mu_T q_F
+	force := c.Transverse / grip
+	if c.Torque > 0 {
+		force += c.Torque / (c.TorqueRadius * grip)
+	}
+	return force
+}

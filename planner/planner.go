@@ -1,0 +1,140 @@
+package planner
+
+import (
+	"clampback/planner/quantity"
+	"clampback/planner/stiffness"
+)
+
+// Work plans a joint: from the residual clamp back through load, embedding and
+// temperature to the preload needed, from the strength of bolt and parts to
+// the preload tolerated, and from both to torque and angle. An infeasible
+// joint is a Plan too, with Feasible false and the reasons in Binds. The error
+// is a *FaultsError: the joint as stated is impossible.
+func Work(joint Joint) (Plan, error) {
+	if faults := joint.Faults(); len(faults) > 0 {
+		return Plan{}, &FaultsError{ID: joint.ID, Faults: faults}
+	}
+	w := newWork(joint)
+	w.assume()
+	w.describe()    // the bolt, the loads and the tightening as numbers
+	w.demand()      // F_Kerf
+	w.springs()     // delta_S, delta_P, Phi
+	w.losses()      // F_Z, dF_Vth
+	w.requirement() // F_Mreq
+	w.limit()       // F_lim
+	if w.joint.Tightening.Method == TorqueAndAngleMethod {
+		w.angleWindow() // torque to snug, then angle
+	} else {
+		w.torqueWindow()
+		w.monitoringAngle()
+	}
+	w.residual() // what the setting leaves in service
+	w.check()
+	return w.plan(), nil
+}
+
+// work is the calculation sheet of one joint. Forces N, lengths mm, stresses
+// MPa, torques N.mm, angles deg; only the trace and the plan speak N.m.
+type work struct {
+	joint       Joint
+	trace       []Line
+	assumptions []string
+	checks      []Check
+	binds       []string
+
+	thread   threadNumbers
+	faces    []face // bearing faces, from the head down
+	friction levers
+	torsion  float64 // tau/sigma of the bolt at assembly
+
+	boltCompliance    float64 // delta_S
+	clampedCompliance float64 // delta_P
+	loadFactor        float64 // Phi
+
+	residualClamp float64 // F_Kerf
+	relief        float64 // (1 - Phi) F_Amax, taken from the clamp
+	boltShare     float64 // Phi F_Amax, added to the bolt
+	embedding     float64 // F_Z
+	thermalLoss   float64 // dF_Vth where it is a loss
+	thermalGain   float64 // dF_Vth where it is a gain
+	required      float64 // F_Mreq
+
+	strip            float64 // F_strip of a tapped thread
+	engagementNeeded float64 // with which the bolt breaks before the thread strips
+	tolerated        float64 // F_lim
+	toleratedBy      string  // what sets F_lim
+
+	window        window
+	scatterFactor float64 // alpha_A of GuideScatter
+	torque        float64 // that the checks are made at
+	snug          float64
+	angleSetting  float64
+	angleLow      float64
+	angleHigh     float64
+	torques       Torque
+
+	lowest       float64 // F_Mmin
+	highest      float64 // F_Mmax
+	largest      float64 // F_Smax, in service
+	lowestClamp  float64 // F_KRmin
+	highestClamp float64 // F_KRmax
+}
+
+func newWork(joint Joint) *work {
+	return &work{joint: joint, trace: make([]Line, 0, 224), checks: make([]Check, 0, 16)}
+}
+
+// plan gathers the record.
+func (w *work) plan() Plan {
+	w.verdict()
+	return Plan{
+		ID:        w.joint.ID,
+		Name:      w.joint.Name,
+		Count:     w.joint.Count,
+		Feasible:  w.feasible(),
+		Binds:     w.binds,
+		Stiffness: Stiffness{w.boltCompliance, w.clampedCompliance, w.loadFactor},
+		WorkBack: WorkBack{
+			RequiredResidualClamp: w.residualClamp,
+			LoadRelief:            w.relief,
+			EmbeddingLoss:         w.embedding,
+			ThermalLoss:           w.thermalLoss,
+			RequiredPreload:       w.required,
+		},
+		Preload:       Preload{Limit: w.tolerated, Lowest: w.lowest, Highest: w.highest, ScatterFactor: w.highest / w.lowest},
+		Torque:        w.torques,
+		Angle:         Angle{SnugTorque: w.snug / 1000, FromSnug: w.angleSetting, Low: w.angleLow, High: w.angleHigh},
+		ResidualClamp: ResidualClamp{Lowest: w.lowestClamp, Highest: w.highestClamp},
+		Checks:        w.checks,
+		Trace:         w.trace,
+		Assumptions:   w.assumptions,
+		Joint:         w.joint,
+		Diagram:       w.diagram(),
+		AngleWindow:   w.angleRange(),
+	}
+}
+
+// diagram gathers the points the joint diagram is drawn from.
+func (w *work) diagram() stiffness.Diagram {
+	return stiffness.Diagram{
+		BoltCompliance:    w.boltCompliance,
+		ClampedCompliance: w.clampedCompliance,
+		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
+		Loss:              w.embedding + w.thermalLoss,
+		Axial:             w.joint.Loads.Axial,
+		LoadFactor:        w.loadFactor,
+		BoltShare:         w.boltShare,
+		ClampShare:        w.relief,
+		ResidualClamp:     quantity.Range{Low: w.lowestClamp, High: w.highestClamp},
+		RequiredResidual:  w.residualClamp,
+		Limit:             w.tolerated,
+	}
+}
+
+// angleRange is the window of the angle setting, where the angle is set.
+func (w *work) angleRange() quantity.Range {
+	if w.joint.Tightening.Method != TorqueAndAngleMethod {
+		return quantity.Range{}
+	}
+	return quantity.Range{Low: w.window.low, High: w.window.high}
+}
