@@ -1,0 +1,144 @@
+package sheet_test
+
+import (
+	"archive/zip"
+	"bytes"
+	"fmt"
+	"io"
+	"runtime"
+	"strings"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+	"github.com/xuri/excelize/v2"
+
+	"clampback/planner"
+	"clampback/report/sheet"
+)
+
+func open(t testing.TB, book []byte) *excelize.File {
+	f, err := excelize.OpenReader(bytes.NewReader(book))
+	require.NoError(t, err)
+	t.Cleanup(func() { f.Close() })
+	return f
+}
+
+// many returns n plans of the demo joints under ids of their own.
+func many(t testing.TB, n int) []planner.Plan {
+	demo := planAll(t, demoJoints(t))
+	plans := make([]planner.Plan, n)
+	for i := range plans {
+		plans[i] = demo[i%len(demo)]
+		plans[i].ID = fmt.Sprintf("J-%04d", i)
+	}
+	return plans
+}
+
+func TestSameBytesForSamePlans(t *testing.T) {
+	first := write(t, planAll(t, demoJoints(t)))
+	for range 3 {
+		assert.True(t, bytes.Equal(first, write(t, planAll(t, demoJoints(t)))))
+	}
+}
+
+func TestBookHasRegisterJointsAndAbout(t *testing.T) {
+	plans := planAll(t, demoJoints(t))
+	f := open(t, write(t, plans))
+	want := []string{"Register"}
+	for _, p := range plans {
+		want = append(want, p.ID)
+	}
+	assert.Equal(t, append(want, "About"), f.GetSheetList())
+	rows, err := f.GetRows("Register")
+	require.NoError(t, err)
+	assert.Len(t, rows, 5+len(plans), "one row a joint below the heading")
+	for _, name := range f.GetSheetList() {
+		protection, err := f.GetSheetProtection(name)
+		require.NoError(t, err)
+		assert.Empty(t, protection.Password, name)
+	}
+}
+
+// An infeasible joint says so in words at the top of its sheet and in the
+// register.
+func TestInfeasibleJointSaysSo(t *testing.T) {
+	f := open(t, write(t, planAll(t, demoJoints(t))))
+	verdict, err := f.GetCellValue("TRN-100", "C4")
+	require.NoError(t, err)
+	assert.Equal(t, "INFEASIBLE: do not tighten", verdict)
+}
+
+// What a user writes never becomes a formula, whatever it begins with.
+func TestUserTextStaysText(t *testing.T) {
+	for _, text := range []string{`=1+1`, `+1`, `-1`, `@SUM(A1)`, `=HYPERLINK("http://x","y")`, "\t=1", "a\x01b", `{=1}`} {
+		joints := demoJoints(t)[:1]
+		joints[0].Name, joints[0].Assembly, joints[0].Parts[0].Name = text, text, text
+		joints[0].Tightening.Tool.Name = text
+		f := open(t, write(t, planAll(t, joints)))
+		for _, name := range f.GetSheetList() {
+			rows, err := f.GetRows(name)
+			require.NoError(t, err)
+			for r, row := range rows {
+				for c, value := range row {
+					if !strings.Contains(value, strings.TrimSpace(strings.ReplaceAll(text, "\x01", ""))) {
+						continue
+					}
+					at, err := excelize.CoordinatesToCellName(c+1, r+1)
+					require.NoError(t, err)
+					formula, err := f.GetCellFormula(name, at)
+					require.NoError(t, err)
+					assert.Empty(t, formula, "%s!%s: %q", name, at, value)
+				}
+			}
+		}
+	}
+}
+
+// Ids of 40 letters, ids that differ late, and reserved words all get a sheet.
+func TestSheetNamesAreValidAndUnique(t *testing.T) {
+	plans := many(t, 6)
+	long := strings.Repeat("A", 39)
+	for i, id := range []string{long + "1", long + "2", "Register", "about", "History", "register~2"} {
+		plans[i].ID = id
+	}
+	f := open(t, write(t, plans))
+	seen := map[string]bool{}
+	for _, name := range f.GetSheetList() {
+		assert.LessOrEqual(t, len(name), 31)
+		assert.False(t, seen[strings.ToLower(name)], name)
+		seen[strings.ToLower(name)] = true
+	}
+	assert.Len(t, seen, 8)
+}
+
+// Every part of the archive is there once, in order, without a time.
+func TestArchiveIsOrdered(t *testing.T) {
+	book := write(t, many(t, 3))
+	z, err := zip.NewReader(bytes.NewReader(book), int64(len(book)))
+	require.NoError(t, err)
+	for i, f := range z.File {
+		if i > 0 {
+			assert.Less(t, z.File[i-1].Name, f.Name)
+		}
+		r, err := f.Open()
+		require.NoError(t, err)
+		_, err = io.Copy(io.Discard, r)
+		require.NoError(t, err)
+	}
+}
+
+// Target: 200 joints with a calculation sheet each in under 3 s and 300 MB.
+func BenchmarkWorkbook200(b *testing.B) {
+	plans := many(b, 200)
+	var before, after runtime.MemStats
+	runtime.GC()
+	runtime.ReadMemStats(&before)
+	for b.Loop() {
+		if err := sheet.Write(io.Discard, plans, sheet.Options{}); err != nil {
+			b.Fatal(err)
+		}
+	}
+	runtime.ReadMemStats(&after)
+	b.ReportMetric(float64(after.Sys)/1e6, "MB-from-system")
+}
