@@ -1,0 +1,142 @@
+package main
+
+import (
+	"context"
+	"io"
+	"os"
+	"time"
+
+	"github.com/schollz/progressbar/v3"
+	"github.com/spf13/cobra"
+
+	"clampback/planner"
+	"clampback/planner/register"
+)
+
+// readJoints reads every register named on the command line.
+func readJoints(c *cobra.Command, files []string) ([]planner.Joint, error) {
+	sources := make([]register.Source, 0, len(files))
+	stdin := false
+	for _, name := range files {
+		if name == "-" {
+			if stdin {
+				return nil, mendable("name \"-\" once", "standard input is named twice")
+			}
+			stdin = true
+		}
+		source, err := openSource(c.InOrStdin(), name)
+		if err != nil {
+			return nil, err
+		}
+		sources = append(sources, source)
+	}
+	return register.Read(sources...)
+}
+
+func openSource(stdin io.Reader, name string) (register.Source, error) {
+	if name == "-" {
+		return register.ReadSource(stdin, "standard input")
+	}
+	f, err := os.Open(name)
+	if err != nil {
+		return register.Source{}, mendable("check the file's name and whether you may read it", "%w", err)
+	}
+	defer f.Close()
+	if info, err := f.Stat(); err == nil && info.IsDir() {
+		return register.Source{}, mendable("name the register files in it", "%s is a folder", name)
+	}
+	return register.ReadSource(f, name)
+}
+
+// planAll plans every joint, with a progress bar when that takes its time.
+func planAll(c *cobra.Command, joints []planner.Joint) ([]planner.Plan, error) {
+	bar := newProgress(c.ErrOrStderr(), len(joints), "planning")
+	defer bar.done()
+	plans := make([]planner.Plan, 0, len(joints))
+	for _, joint := range joints {
+		if err := c.Context().Err(); err != nil {
+			return nil, err
+		}
+		plan, err := planner.Work(joint)
+		if err != nil {
+			return nil, err
+		}
+		plans = append(plans, plan)
+		bar.step()
+	}
+	return plans, nil
+}
+
+// planFiles reads and plans the registers of a command line.
+func planFiles(c *cobra.Command, files []string) ([]planner.Plan, error) {
+	joints, err := readJoints(c, files)
+	if err != nil {
+		return nil, err
+	}
+	return planAll(c, joints)
+}
+
+// verdict returns errInfeasible when some joint is infeasible.
+func verdict(plans []planner.Plan) error {
+	for _, p := range plans {
+		if !p.Feasible {
+			return errInfeasible
+		}
+	}
+	return nil
+}
+
+// progress is a bar on a terminal that appears after a second; elsewhere it is
+// nothing.
+type progress struct {
+	start time.Time
+	total int
+	made  int
+	label string
+	out   io.Writer
+	bar   *progressbar.ProgressBar
+}
+
+func newProgress(w io.Writer, total int, label string) *progress {
+	p := &progress{start: time.Now(), total: total, label: label}
+	if isTerminal(w) {
+		p.out = w
+	}
+	return p
+}
+
+func (p *progress) step() {
+	p.made++
+	if p.out == nil || time.Since(p.start) < time.Second {
+		return
+	}
+	if p.bar == nil {
+		p.bar = progressbar.NewOptions(p.total,
+			progressbar.OptionSetWriter(p.out),
+			progressbar.OptionSetDescription(p.label),
+			progressbar.OptionThrottle(100*time.Millisecond),
+			progressbar.OptionClearOnFinish())
+	}
+	// A bar that cannot be drawn must not end the work.
+	_ = p.bar.Set(p.made)
+}
+
+func (p *progress) done() {
+	if p.bar != nil {
+		_ = p.bar.Finish()
+	}
+}
+
+// stoppable is a writer that fails once the context ends, so that Ctrl-C stops
+// a long document too.
+type stoppable struct {
+	ctx context.Context
+	w   io.Writer
+}
+
+func (s stoppable) Write(b []byte) (int, error) {
+	if err := s.ctx.Err(); err != nil {
+		return 0, err
+	}
+	return s.w.Write(b)
+}
