@@ -8,8 +8,7 @@ import (
 	"clampback/planner/stiffness"
 )
 
-// Plan is what Work makes of a joint: the record of design section 5. It is a
-// plain value; keys of its JSON form carry their unit. Torques are N.m here,
+// Plan is what Work makes of a joint, and its record in JSON. It is a plain value; keys of its JSON form carry their unit. Torques are N.m here,
 // N.mm inside the calculation.
 type Plan struct {
 	ID            string        `json:"id"`
@@ -113,23 +112,15 @@ type Line struct {
 	Index int    `json:"-"` // place in a repeated line (layer, shank piece), from 1; 0: not repeated
 }
 
-// Record is the plan record of a whole register: the JSON that
-// "clampback plan --format json" prints.
-type Record struct {
-	Assembly string `json:"assembly"`
-	Revision string `json:"revision"`
-	Joints   []Plan `json:"joints"`
-}
-
-// NewRecord gathers plans into a record. Joints from registers of several
-// assemblies or revisions name them all, in order.
-func NewRecord(plans []Plan) Record {
+// Headings returns what the record of a whole register is headed with: the
+// assemblies and the revisions of its joints, each once, in order.
+func Headings(joints []Joint) (assembly, revision string) {
 	var assemblies, revisions []string
-	for _, p := range plans {
-		assemblies = appendNew(assemblies, p.Joint.Assembly)
-		revisions = appendNew(revisions, p.Joint.Revision)
+	for _, j := range joints {
+		assemblies = appendNew(assemblies, j.Assembly)
+		revisions = appendNew(revisions, j.Revision)
 	}
-	return Record{Assembly: strings.Join(assemblies, "; "), Revision: strings.Join(revisions, "; "), Joints: plans}
+	return strings.Join(assemblies, "; "), strings.Join(revisions, "; ")
 }
 
 func appendNew(list []string, s string) []string {

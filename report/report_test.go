@@ -5,6 +5,7 @@ import (
 	"encoding/json"
 	"errors"
 	"flag"
+	"iter"
 	"os"
 	"testing"
 
@@ -31,6 +32,17 @@ func demoPlans(t testing.TB) []planner.Plan {
 	return plans
 }
 
+// each gives the plans one by one, as the program does.
+func each(plans []planner.Plan) iter.Seq2[planner.Plan, error] {
+	return func(yield func(planner.Plan, error) bool) {
+		for _, p := range plans {
+			if !yield(p, nil) {
+				return
+			}
+		}
+	}
+}
+
 // The text of the demo plant as it was last read and approved.
 func TestTextGolden(t *testing.T) {
 	for name, o := range map[string]report.TextOptions{"plan.golden": {}, "trace.golden": {Trace: true}} {
@@ -39,7 +51,7 @@ func TestTextGolden(t *testing.T) {
 			plans = plans[:1]
 		}
 		var got bytes.Buffer
-		require.NoError(t, report.WriteText(&got, plans, o))
+		require.NoError(t, report.WriteText(&got, each(plans), o))
 		path := "testdata/" + name
 		if *update {
 			require.NoError(t, os.WriteFile(path, got.Bytes(), 0o600))
@@ -53,8 +65,8 @@ func TestTextGolden(t *testing.T) {
 // Colour repeats the words and adds nothing else.
 func TestColourOnlyMarks(t *testing.T) {
 	var plain, coloured bytes.Buffer
-	require.NoError(t, report.WriteText(&plain, demoPlans(t), report.TextOptions{}))
-	require.NoError(t, report.WriteText(&coloured, demoPlans(t), report.TextOptions{Colour: true}))
+	require.NoError(t, report.WriteText(&plain, each(demoPlans(t)), report.TextOptions{}))
+	require.NoError(t, report.WriteText(&coloured, each(demoPlans(t)), report.TextOptions{Colour: true}))
 	text := coloured.Bytes()
 	for _, code := range []string{"\x1b[32m", "\x1b[1;31m", "\x1b[0m"} {
 		assert.Contains(t, string(text), code)
@@ -66,7 +78,7 @@ func TestColourOnlyMarks(t *testing.T) {
 // The record has exactly the keys of the design, and numbers where it has them.
 func TestRecordKeys(t *testing.T) {
 	var b bytes.Buffer
-	require.NoError(t, report.WriteJSON(&b, demoPlans(t)))
+	require.NoError(t, report.WriteJSON(&b, "Tarn 40 slurry pump", "C", each(demoPlans(t))))
 	var record map[string]any
 	require.NoError(t, json.Unmarshal(b.Bytes(), &record))
 	assert.ElementsMatch(t, []string{"assembly", "revision", "joints"}, keys(record))
@@ -99,8 +111,8 @@ func keys(m map[string]any) []string {
 
 // A writer that fails is reported.
 func TestFailedWriterIsReported(t *testing.T) {
-	assert.Error(t, report.WriteText(broken{}, demoPlans(t), report.TextOptions{}))
-	assert.Error(t, report.WriteJSON(broken{}, demoPlans(t)))
+	assert.Error(t, report.WriteText(broken{}, each(demoPlans(t)), report.TextOptions{}))
+	assert.Error(t, report.WriteJSON(broken{}, "", "", each(demoPlans(t))))
 }
 
 type broken struct{}

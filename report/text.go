@@ -4,6 +4,7 @@ import (
 	"bufio"
 	"fmt"
 	"io"
+	"iter"
 	"math"
 	"strings"
 
@@ -18,19 +19,27 @@ type TextOptions struct {
 	Colour bool // mark verdicts with terminal colours; the words stay the same
 }
 
-// WriteText prints each joint's work-back as a person reads it.
-func WriteText(w io.Writer, plans []planner.Plan, o TextOptions) error {
+// WriteText prints each joint's work-back as a person reads it, as it comes. The
+// error is the writer's or the first of the plans.
+func WriteText(w io.Writer, plans iter.Seq2[planner.Plan, error], o TextOptions) error {
 	t := &text{w: bufio.NewWriter(w), options: o}
-	assembly := ""
-	for _, p := range plans {
-		heading := p.Joint.Assembly + ", revision " + p.Joint.Revision
+	assembly, feasible, all := "", 0, 0
+	for p, err := range plans {
+		if err != nil {
+			return err
+		}
+		all++
+		if p.Feasible {
+			feasible++
+		}
+		heading := p.Joint.Assembly + ", revision " + orNotStated(p.Joint.Revision)
 		if heading != assembly {
 			t.printf("%s\n", heading)
 			assembly = heading
 		}
 		t.joint(p)
 	}
-	t.summary(plans)
+	t.summary(feasible, all)
 	return t.w.Flush()
 }
 
@@ -180,15 +189,8 @@ func (t *text) trace(p planner.Plan) {
 	}
 }
 
-func (t *text) summary(plans []planner.Plan) {
-	feasible := 0
-	for _, p := range plans {
-		if p.Feasible {
-			feasible++
-		}
-	}
-	t.printf("\n%d joints: %d feasible, %d infeasible. Calculated, not tested on these joints.\n",
-		len(plans), feasible, len(plans)-feasible)
+func (t *text) summary(feasible, all int) {
+	t.printf("\n%d joints: %d feasible, %d infeasible. Calculated, not tested on these joints.\n", all, feasible, all-feasible)
 	t.printf("Local codes and the judgement of a licensed engineer come first.\n")
 }
 
@@ -215,6 +217,13 @@ func Plain(v float64) string {
 	default:
 		return fmt.Sprintf("%.4g", v)
 	}
+}
+
+func orNotStated(s string) string {
+	if s == "" {
+		return "not stated"
+	}
+	return s
 }
 
 // tenth prints a number with one decimal.

@@ -3,6 +3,7 @@ package main
 import (
 	"context"
 	"io"
+	"iter"
 	"os"
 	"time"
 
@@ -48,23 +49,23 @@ func openSource(stdin io.Reader, name string) (register.Source, error) {
 	return register.ReadSource(f, name)
 }
 
-// planAll plans every joint, with a progress bar when that takes its time.
-func planAll(c *cobra.Command, joints []planner.Joint) ([]planner.Plan, error) {
-	bar := newProgress(c.ErrOrStderr(), len(joints), "planning")
-	defer bar.done()
-	plans := make([]planner.Plan, 0, len(joints))
-	for _, joint := range joints {
-		if err := c.Context().Err(); err != nil {
-			return nil, err
+// planEach plans the joints one by one as they are asked for, with a progress bar
+// when that takes its time.
+func planEach(c *cobra.Command, joints []planner.Joint) iter.Seq2[planner.Plan, error] {
+	return func(yield func(planner.Plan, error) bool) {
+		bar := newProgress(c.ErrOrStderr(), len(joints), "planning")
+		defer bar.done()
+		for _, joint := range joints {
+			plan, err := planner.Work(joint)
+			if err == nil {
+				err = c.Context().Err()
+			}
+			if !yield(plan, err) || err != nil {
+				return
+			}
+			bar.step()
 		}
-		plan, err := planner.Work(joint)
-		if err != nil {
-			return nil, err
-		}
-		plans = append(plans, plan)
-		bar.step()
 	}
-	return plans, nil
 }
 
 // planFiles reads and plans the registers of a command line.
@@ -73,7 +74,14 @@ func planFiles(c *cobra.Command, files []string) ([]planner.Plan, error) {
 	if err != nil {
 		return nil, err
 	}
-	return planAll(c, joints)
+	plans := make([]planner.Plan, 0, len(joints))
+	for plan, err := range planEach(c, joints) {
+		if err != nil {
+			return nil, err
+		}
+		plans = append(plans, plan)
+	}
+	return plans, nil
 }
 
 // verdict returns errInfeasible when some joint is infeasible.

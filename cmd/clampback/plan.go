@@ -1,10 +1,9 @@
 package main
 
 import (
-	"bufio"
-
 	"github.com/spf13/cobra"
 
+	"clampback/planner"
 	"clampback/report"
 )
 
@@ -25,23 +24,30 @@ what binds, the checks and the assumptions.`,
 			if format != "text" && format != "json" {
 				return mendable("write --format text or --format json", "unknown format %q", format)
 			}
-			plans, err := planFiles(c, files)
+			joints, err := readJoints(c, files)
 			if err != nil {
 				return err
 			}
-			out := bufio.NewWriter(stoppable{c.Context(), c.OutOrStdout()})
+			feasible := true
+			plans := func(yield func(planner.Plan, error) bool) {
+				for p, err := range planEach(c, joints) {
+					feasible = feasible && p.Feasible
+					if !yield(p, err) {
+						return
+					}
+				}
+			}
+			out := stoppable{c.Context(), c.OutOrStdout()}
 			if format == "json" {
-				err = report.WriteJSON(out, plans)
+				assembly, revision := planner.Headings(joints)
+				err = report.WriteJSON(out, assembly, revision, plans)
 			} else {
 				err = report.WriteText(out, plans, report.TextOptions{Trace: trace, Colour: useColour(c.OutOrStdout())})
 			}
-			if err != nil {
-				return err
+			if err == nil && !feasible {
+				return errInfeasible
 			}
-			if err := out.Flush(); err != nil {
-				return err
-			}
-			return verdict(plans)
+			return err
 		},
 	}
 	c.Flags().StringVar(&format, "format", "text", `"text" to read, "json" for the plan record`)

@@ -141,10 +141,10 @@ func (b *book) writeRegister(calculations []calculation) error {
 		return err
 	}
 	w := &writer{stream, 1}
-	record := planner.NewRecord(plansOf(calculations))
+	assembly, revision := planner.Headings(jointsOf(calculations))
 	rows := [][]any{
 		{cell(b.styles.title, "Joint register")},
-		{cell(0, clean(record.Assembly+", revision "+orNone(record.Revision)+", prepared by "+orNone(first.PreparedBy)))},
+		{cell(0, clean(assembly+", revision "+orNone(revision)+", prepared by "+orNone(first.PreparedBy)))},
 		{cell(0, "Each joint has a sheet of its own, with every line of the calculation live. "+caution)},
 		{},
 		heading,
@@ -201,12 +201,12 @@ func (b *book) dropFilterName() {
 	}
 }
 
-func plansOf(calculations []calculation) []planner.Plan {
-	plans := make([]planner.Plan, len(calculations))
+func jointsOf(calculations []calculation) []planner.Joint {
+	joints := make([]planner.Joint, len(calculations))
 	for i, c := range calculations {
-		plans[i] = c.plan
+		joints[i] = c.plan.Joint
 	}
-	return plans
+	return joints
 }
 
 // writeAbout writes how to read the book, the cautions and the sources.
