@@ -101,7 +101,7 @@ func TestCardTextIsThePlans(t *testing.T) {
 			} else {
 				assert.Contains(t, front, "Set "+quantity.Trim(p.Torque.Target)+" N.m.")
 			}
-			for _, text := range []string{"Warnings", "Not OK", "Do not add torque.", "Calculated, not tested", "revision C", "Local codes", "Tightened by"} {
+			for _, text := range []string{"Warnings", "OK or not OK", "Do not add torque.", "Calculated, not tested", "revision C", "Local codes", "Tightened by"} {
 				assert.Contains(t, whole, text)
 			}
 			for i := range all {
@@ -114,7 +114,7 @@ func TestCardTextIsThePlans(t *testing.T) {
 // The limits of the angle are rounded inwards: what the card accepts, the plan
 // accepts.
 func TestAcceptedAngleLiesInsideThePlan(t *testing.T) {
-	accepts := regexp.MustCompile(`accept (\d+) to (\d+) deg`)
+	accepts := regexp.MustCompile(`OK is (\d+) to (\d+) deg`)
 	for _, p := range demoPlans(t) {
 		if !p.Feasible || p.Joint.Tightening.Method == planner.TorqueAndAngleMethod {
 			continue

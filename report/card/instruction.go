@@ -278,13 +278,13 @@ func (d *document) notOK(p planner.Plan) block {
 	var items []item
 	if isAngle(p) {
 		items = append(items,
-			item{"●", say("accept_heading_torque"), say("accept_end", "anglelow", a.lowAngle, "anglehigh", a.highAngle, "low", a.lowTorque, "high", a.highTorque)},
+			item{"✓", say("accept_heading_torque"), say("accept_end", "anglelow", a.lowAngle, "anglehigh", a.highAngle, "low", a.lowTorque, "high", a.highTorque)},
 			item{"×", "", say("nok_angle", "low", a.lowAngle, "high", a.highAngle)},
 			item{"×", "", say("nok_torque", "low", a.lowTorque, "high", a.highTorque)})
 	} else {
 		items = append(items,
 			item{"×", "", say("nok_spin")},
-			item{"●", say("accept_heading"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low", a.lowAngle, "high", a.highAngle)})
+			item{"✓", say("accept_heading"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low", a.lowAngle, "high", a.highAngle)})
 	}
 	items = append(items, item{"×", "", say("nok_early")}, item{"×", "", say("nok_parts")})
 	items = append(items, item{"→", say("nok_do_heading"), say("nok_do")})
