@@ -10,44 +10,23 @@ import (
 )
 
 // calculation returns the blocks of the engineer's page: the joint diagram, the
-// work-back, the window, the checks and the assumptions.
+// work-back, the window, the checks, what binds and the assumptions.
 func (d *document) calculation(p planner.Plan) []block {
 	say := d.words.say
-	white := func(b block) block { return b }
-	if !p.Feasible {
-		white = d.onWhite
-	}
 	title := d.paragraph(say("calc_title"), bold(d.body()))
 	title.fresh = true
-	blocks := []block{white(title)}
+	blocks := []block{title}
 	if !p.Feasible {
-		blocks = append(blocks, white(d.paragraph(say("calc_infeasible"), bold(figure.Type{Size: d.mm(titleSize)}))))
+		blocks = append(blocks, d.paragraph(say("calc_infeasible"), bold(figure.Type{Size: d.mm(titleSize)})))
 	}
-	height := d.mm(62)
+	height := d.mm(58)
 	diagram := block{height: height, draw: func(y float64) {
-		figure.JointDiagram(d.canvas, p, figure.Box{X: d.left(), Y: y, Width: d.wide(), Height: height})
+		figure.JointDiagram(d.canvas, p, figure.Box{X: d.left(), Y: y, Width: d.wide(), Height: height}, say)
 	}}
-	blocks = append(blocks, white(diagram), white(d.twoLists(p)), white(d.listBlock(say("calc_binds"), plainItems(p.Binds), d.small())), white(d.checkTable(p)))
-	// Assumptions may be many: each is a block of its own, so that they flow.
-	blocks = append(blocks, white(d.paragraph(say("calc_assumptions"), bold(d.small()))))
-	for _, a := range p.Assumptions {
-		blocks = append(blocks, white(d.tight(d.listBlock("", plainItems([]string{a}), d.small()))))
-	}
-	return blocks
-}
-
-// tight takes the gap after a block back.
-func (d *document) tight(b block) block {
-	b.height -= d.mm(gap) * 0.85
-	return b
-}
-
-func plainItems(texts []string) []item {
-	items := make([]item, len(texts))
-	for i, t := range texts {
-		items[i] = item{mark: "–", text: t}
-	}
-	return items
+	blocks = append(blocks, diagram, d.twoLists(p))
+	blocks = append(blocks, d.checkTable(p)...)
+	blocks = append(blocks, d.flow(say("calc_binds"), plainItems(p.Binds), d.small())...)
+	return append(blocks, d.flow(say("calc_assumptions"), plainItems(p.Assumptions), d.small())...)
 }
 
 // twoLists sets the work-back beside the setting.
@@ -65,12 +44,10 @@ func (d *document) twoLists(p planner.Plan) block {
 	}
 	setting := d.newList(say("calc_setting"), plainItems(d.settingLines(p)), half, d.small())
 	line := d.mm(smallSize) * lineHeight
-	head := line * 1.25
+	head := d.mm(smallSize) * headingHeight
 	height := max(head+float64(len(rows))*line*1.1, setting.height())
 	return block{height: height, draw: func(y float64) {
-		h := bold(d.small())
-		h.Size *= 1.15
-		d.canvas.Text(d.left(), y+h.Size, say("calc_workback"), h)
+		d.heading(say("calc_workback"), d.left(), y, d.small())
 		at := y + head
 		for _, r := range rows {
 			at += line * 1.1
@@ -103,51 +80,62 @@ func (d *document) settingLines(p planner.Plan) []string {
 			"factor", fmt.Sprintf("%.2f", p.Preload.ScatterFactor)),
 		say("calc_left", "low", kilo(quantity.RoundDown(p.ResidualClamp.Lowest, 10)), "high", kilo(quantity.RoundUp(p.ResidualClamp.Highest, 10))),
 		say("calc_stiffness", "bolt", fmt.Sprintf("%.4g", s.BoltCompliance*1e6), "parts", fmt.Sprintf("%.4g", s.ClampedCompliance*1e6), "factor", fmt.Sprintf("%.4f", s.LoadFactor)),
-		say("calc_friction", "thread", span(f.Thread), "head", span(f.Head), "source", f.Source),
+		say("calc_friction", "thread", d.span(f.Thread), "head", d.span(f.Head), "source", f.Source),
 	)
 }
 
 func kilo(newton float64) string { return fmt.Sprintf("%.2f", newton/1000) }
 
-func span(r quantity.Range) string {
+// span prints a range of coefficients of friction.
+func (d *document) span(r quantity.Range) string {
 	if r.IsSingle() {
-		return quantity.Trim(r.Low)
+		return coefficient(r.Low)
 	}
-	return quantity.Trim(r.Low) + " to " + quantity.Trim(r.High)
+	return d.words.say("range", "low", coefficient(r.Low), "high", coefficient(r.High))
 }
 
-// checkTable lists the checks with a bar of how much each uses.
-func (d *document) checkTable(p planner.Plan) block {
+// coefficient prints a coefficient with two decimals, or more where it has them.
+func coefficient(mu float64) string {
+	if text := quantity.Trim(mu); len(text) > len("0.00") {
+		return text
+	}
+	return fmt.Sprintf("%.2f", mu)
+}
+
+// checkTable lists the checks with how much each uses, a row a block.
+func (d *document) checkTable(p planner.Plan) []block {
 	say := d.words.say
-	line := d.mm(smallSize) * lineHeight * 1.12
 	t := d.small()
+	blocks := []block{d.checkRow([...]string{say("calc_check"), say("calc_value"), say("calc_allowed"), "", say("calc_used"), ""}, bold(t))}
+	for _, c := range p.Checks {
+		verdict, face := say("calc_ok"), t
+		if !c.OK {
+			verdict, face = say("calc_fails"), bold(t)
+		}
+		relation := "≤ "
+		if c.AtLeast {
+			relation = "≥ "
+		}
+		blocks = append(blocks, d.checkRow([...]string{c.Name, report.Plain(c.Value), relation + report.Plain(c.Limit), c.Unit, fmt.Sprintf("%.0f %%", c.Utilisation*100), verdict}, face))
+	}
+	blocks[len(blocks)-1].tight = false
+	return blocks
+}
+
+// checkRow is a row of the table of checks: name, value, limit, unit, use and
+// verdict.
+func (d *document) checkRow(cells [6]string, t figure.Type) block {
+	line := d.mm(smallSize) * lineHeight * 1.12
 	end := t
 	end.Anchor = figure.End
 	x, w := d.left(), d.wide()
-	columns := []float64{x, x + 0.60*w, x + 0.74*w, x + 0.83*w, x + 0.92*w}
-	return block{height: line * float64(len(p.Checks)+1), draw: func(y float64) {
+	return block{height: line, tight: true, draw: func(y float64) {
 		base := y + line*0.8
-		d.canvas.Text(columns[0], base, say("calc_check"), bold(t))
-		for i, key := range []string{"calc_value", "calc_allowed"} {
-			d.canvas.Text(columns[i+1], base, say(key), bold(end))
-		}
-		d.canvas.Text(columns[4], base, say("calc_used"), bold(end))
-		for _, c := range p.Checks {
-			base += line
-			verdict, face := say("calc_ok"), t
-			if !c.OK {
-				verdict, face = say("calc_fails"), bold(t)
-			}
-			relation := "≤"
-			if c.AtLeast {
-				relation = "≥"
-			}
-			d.canvas.Text(columns[0], base, c.Name, d.fit(c.Name, 0.47*w, face))
-			d.canvas.Text(columns[1], base, report.Plain(c.Value), end)
-			d.canvas.Text(columns[2], base, relation+" "+report.Plain(c.Limit), end)
-			d.canvas.Text(columns[2]+d.mm(1), base, c.Unit, t)
-			d.canvas.Text(columns[4], base, fmt.Sprintf("%.0f %%", c.Utilisation*100), end)
-			d.canvas.Text(columns[4]+d.mm(1.5), base, verdict, face)
-		}
+		d.canvas.Text(x, base, cells[0], d.fit(cells[0], 0.48*w, t))
+		d.canvas.Text(x+0.60*w, base, cells[1], end)
+		d.canvas.Text(x+0.74*w, base, cells[2], end)
+		d.canvas.Text(x+0.75*w, base, cells[3], t)
+		d.canvas.Text(x+0.89*w, base, cells[4], end)
+		d.canvas.Text(x+0.91*w, base, cells[5], t)
 	}}
 }

@@ -18,50 +18,58 @@ func (d *document) forbidden(p planner.Plan) []block {
 		d.canvas.Text(d.paper.width/2, y+heading.Size*1.25, say("forbid_heading"), t)
 	}}
 	large := figure.Type{Size: d.mm(nameSize)}
-	return []block{
+	blocks := []block{
 		banner,
-		d.onWhite(d.paragraph(say("forbid_title", "id", p.ID), bold(figure.Type{Size: d.mm(titleSize)}))),
-		d.onWhite(d.paragraph(say("forbid_text"), large)),
-		d.onWhite(d.listBlock(say("forbid_reasons"), d.reasons(p), large)),
-		d.onWhite(d.paragraph(say("forbid_do"), bold(large))),
+		d.paragraph(say("forbid_title", "id", p.ID), bold(figure.Type{Size: d.mm(titleSize)})),
+		d.paragraph(say("forbid_text"), large),
 	}
+	blocks = append(blocks, d.flow(say("forbid_reasons"), d.reasons(p), large)...)
+	return append(blocks, d.paragraph(say("forbid_do"), bold(large)))
 }
 
 // reasons names what fails, without numbers.
 func (d *document) reasons(p planner.Plan) []item {
-	var items []item
-	if p.Torque.Target == 0 || (isAngle(p) && p.Angle.FromSnug == 0) {
-		items = append(items, item{mark: "×", text: d.words.say("forbid_window")})
+	var texts []string
+	none := p.Torque.Target == 0 || (isAngle(p) && p.Angle.FromSnug == 0)
+	if none {
+		texts = append(texts, d.words.say("forbid_window"))
 	}
 	for _, c := range p.Checks {
 		if !c.OK {
-			items = append(items, item{mark: "×", text: d.words.say("forbid_check", "check", c.Name)})
+			texts = append(texts, d.words.say("forbid_check", "check", c.Name))
 		}
+	}
+	if !none && !isAngle(p) && p.Angle.SnugTorque >= p.Torque.Target {
+		texts = append(texts, d.words.say("forbid_snug"))
+	}
+	if len(texts) == 0 {
+		texts = append(texts, d.words.say("forbid_other"))
+	}
+	items := make([]item, len(texts))
+	for i, t := range texts {
+		items[i] = item{mark: "×", text: t}
 	}
 	return items
 }
 
-// onWhite puts a block on a white ground, so that it reads on the hatching.
-func (d *document) onWhite(b block) block {
-	pad := d.mm(1.5)
-	return block{height: b.height + 2*pad, fresh: b.fresh, draw: func(y float64) {
-		d.rectangle(d.left()-pad, y, d.wide()+2*pad, b.height+2*pad, 1, figure.Stroke{})
-		b.draw(y + pad)
-	}}
-}
-
-// hatch covers the page with slanting strokes and a heavy frame.
-func (d *document) hatch() {
+// hatch covers the page with slanting strokes and a heavy frame, and keeps white
+// what the page says.
+func (d *document) hatch(p planner.Plan, s sheet) {
 	w, h := d.paper.width, d.paper.height
 	stroke := figure.Stroke{Width: d.mm(1.6), Grey: 0.8}
 	for x := -h; x < w; x += d.mm(7) {
-		from, to := figure.Point{X: x, Y: h}, figure.Point{X: x + h, Y: 0}
-		d.canvas.Line(from.X, from.Y, to.X, to.Y, stroke)
+		d.canvas.Line(x, h, x+h, 0, stroke)
 	}
 	edge := d.mm(3)
 	for _, r := range []figure.Box{{Width: w, Height: edge}, {Y: h - edge, Width: w, Height: edge}, {Width: edge, Height: h}, {X: w - edge, Width: edge, Height: h}} {
 		d.rectangle(r.X, r.Y, r.Width, r.Height, 0, figure.Stroke{})
 	}
-	d.rectangle(d.left()-d.mm(1.5), d.mm(margin)-d.mm(2), d.wide()+d.mm(3), d.mm(18), 1, figure.Stroke{})
-	d.rectangle(d.left()-d.mm(1.5), h-d.mm(margin)-d.mm(footer), d.wide()+d.mm(3), d.mm(footer)+d.mm(1.5), 1, figure.Stroke{})
+	pad := d.mm(1.5)
+	white := func(from, to float64) {
+		d.rectangle(d.left()-pad, from-pad, d.wide()+2*pad, to-from+2*pad, 1, figure.Stroke{})
+	}
+	last := len(s.blocks) - 1
+	white(d.mm(margin), s.at[last]+s.blocks[last].height)
+	foot := h - d.mm(margin)
+	white(foot-d.footHeight(p), foot)
 }

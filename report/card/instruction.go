@@ -1,8 +1,6 @@
 package card
 
 import (
-	"fmt"
-	"math"
 	"strconv"
 	"strings"
 
@@ -13,11 +11,18 @@ import (
 )
 
 // instruction returns the blocks of a feasible joint's card, in the order in
-// which a technician needs them.
+// which a technician needs them: the front to read before work, the back to work
+// by.
 func (d *document) instruction(p planner.Plan) []block {
-	blocks := []block{d.what(p), d.setting(p), d.lubrication(p)}
-	blocks = append(blocks, d.orderAndSteps(p)...)
-	return append(blocks, d.warnings(p), d.notOK(p), d.record())
+	front := d.shrunk(p, func(d *document) []block {
+		blocks := append([]block{d.what(p), d.setting(p)}, d.toolAndLubrication(p)...)
+		return append(blocks, d.warnings(p)...)
+	})
+	back := d.shrunk(p, func(d *document) []block {
+		return append(d.orderAndSteps(p), d.verdict(p), d.record())
+	})
+	back[0].fresh = true
+	return append(front, back...)
 }
 
 // isAngle reports whether the joint is tightened by torque and angle.
@@ -45,7 +50,7 @@ func (d *document) what(p planner.Plan) block {
 	for _, l := range lines {
 		wrapped = append(wrapped, d.wrap(l, d.wide()-side, d.body())...)
 	}
-	height := max(large.Size*lineHeight, float64(len(wrapped))*d.mm(bodySize)*lineHeight)
+	height := max(large.Size*lineHeight, float64(len(wrapped))*d.body().Size*lineHeight)
 	return block{height: height, draw: func(y float64) {
 		d.canvas.Text(d.left(), y+large.Size*0.85, count, large)
 		d.lines(wrapped, d.left()+side, y, d.body())
@@ -84,66 +89,86 @@ func (d *document) washers(j planner.Joint) string {
 // figureBox is a setting in large figures: label, number and unit.
 type figureBox struct{ label, number, unit string }
 
+// The type of the settings: digits are 0.73 of it high, 14 mm at least on A5.
+const (
+	oneFigure  = 33.0 // of a single setting: digits 24 mm high
+	twoFigures = 24.0 // of each of two: digits 17.5 mm high
+	unitSize   = 8.0
+	labelSize  = 4.6
+	labelWidth = 36.0 // of the labels beside two figures
+)
+
 // setting is the frame with what the tool is set to, the largest thing on the
-// card.
+// card: one figure below its label, or two in their order, each beside its label.
 func (d *document) setting(p planner.Plan) block {
-	boxes := []figureBox{{d.words.say("set_tool"), quantity.Trim(p.Torque.Target), d.words.say("unit_torque")}}
 	if isAngle(p) {
-		boxes = []figureBox{
-			{d.words.say("first_torque"), quantity.Trim(p.Angle.SnugTorque), d.words.say("unit_torque")},
-			{d.words.say("then_angle"), quantity.Trim(p.Angle.FromSnug), d.words.say("unit_angle")},
-		}
+		return d.twoSettings(
+			figureBox{d.words.say("first_torque"), quantity.Trim(p.Angle.SnugTorque), d.words.say("unit_torque")},
+			figureBox{d.words.say("then_angle"), quantity.Trim(p.Angle.FromSnug), d.words.say("unit_angle")})
 	}
-	tool := d.wrap(d.tool(p), d.wide()-d.mm(4), d.body())
-	label := d.mm(bodySize) * 1.2
-	height := label*lineHeight + d.mm(bigSize)*0.86 + float64(len(tool))*d.mm(bodySize)*lineHeight + d.mm(1.5)
-	return d.framed(height, 0.9, func(x, y float64) {
-		each := (d.wide() - d.mm(4)) / float64(len(boxes))
-		for i, b := range boxes {
-			d.figures(b, x+float64(i)*each, y, each, label)
-		}
-		d.lines(tool, x, y+label*lineHeight+d.mm(bigSize)*0.86+d.mm(1.5), d.body())
+	b := figureBox{d.words.say("set_tool"), quantity.Trim(p.Torque.Target), d.words.say("unit_torque")}
+	above := d.mm(labelSize) * 1.7
+	digits := d.mm(oneFigure) * figure.DigitHeight
+	return d.framed(above+digits+d.mm(1), 0.9, func(x, y float64) {
+		d.canvas.Text(x, y+d.mm(labelSize), b.label, figure.Type{Size: d.mm(labelSize), Bold: true})
+		d.figures(b, x, y+above+digits, d.wide()-d.mm(4), d.mm(oneFigure))
 	})
 }
 
-// figures prints one setting in large figures, shrunk only when a number is
+func (d *document) twoSettings(boxes ...figureBox) block {
+	label := figure.Type{Size: d.mm(labelSize), Bold: true}
+	digits := d.mm(twoFigures) * figure.DigitHeight
+	row := digits + d.mm(5)
+	side := d.mm(labelWidth)
+	return d.framed(row*float64(len(boxes))-d.mm(2), 0.9, func(x, y float64) {
+		for i, b := range boxes {
+			if i > 0 {
+				d.canvas.Line(x, y-d.mm(1), x+d.wide()-d.mm(4), y-d.mm(1), figure.Stroke{Width: d.mm(0.25)})
+			}
+			base := y + d.mm(1.5) + digits
+			d.canvas.Text(x, base, b.label, d.fit(b.label, side-d.mm(2), label))
+			d.figures(b, x+side, base, d.wide()-d.mm(4)-side, d.mm(twoFigures))
+			y += row
+		}
+	})
+}
+
+// figures prints a setting and its unit on a base line, shrunk only when it is
 // wider than its room.
-func (d *document) figures(b figureBox, x, y, width, label float64) {
-	d.canvas.Text(x, y+label, b.label, figure.Type{Size: label, Bold: true})
-	unit := figure.Type{Size: d.mm(8), Bold: true}
-	number := d.fit(b.number, width-d.canvas.Width(b.unit, unit)-d.mm(6), figure.Type{Size: d.mm(bigSize), Bold: true})
-	base := y + label*lineHeight + d.mm(bigSize)*0.8
+func (d *document) figures(b figureBox, x, base, width, size float64) {
+	unit := figure.Type{Size: d.mm(unitSize), Bold: true}
+	space := d.mm(3)
+	number := d.fit(b.number, width-d.canvas.Width(b.unit, unit)-space, figure.Type{Size: size, Bold: true})
 	d.canvas.Text(x, base, b.number, number)
-	d.canvas.Text(x+d.canvas.Width(b.number, number)+d.mm(3), base, b.unit, unit)
+	d.canvas.Text(x+d.canvas.Width(b.number, number)+space, base, b.unit, unit)
 }
 
-// tool names the tool and how well it reads. With the guide's scatter the
+// toolAndLubrication says what the setting rests on. With the guide's scatter the
 // register may leave the tool out.
-func (d *document) tool(p planner.Plan) string {
-	t := p.Joint.Tightening.Tool
-	if t == nil {
-		return d.words.say("tool_unnamed")
+func (d *document) toolAndLubrication(p planner.Plan) []block {
+	say := d.words.say
+	tool := say("tool_unnamed")
+	if t := p.Joint.Tightening.Tool; t != nil {
+		if t.Name != "" {
+			tool = t.Name
+		}
+		tool = say("tool_accuracy", "tool", tool, "tolerance", quantity.Trim(t.Tolerance*100))
 	}
-	name := t.Name
-	if name == "" {
-		name = d.words.say("tool_unnamed")
-	}
-	return d.words.say("tool", "tool", name, "tolerance", quantity.Trim(t.Tolerance*100))
-}
-
-func (d *document) lubrication(p planner.Plan) block {
-	state := p.Joint.Friction.State
+	f := p.Joint.Friction
+	state := f.State
 	if state == "" {
-		state = d.words.say("lubrication_missing")
+		state = say("lubrication_missing")
 	}
-	return d.listBlock("", []item{{lead: d.words.say("lubrication"), text: state}}, d.body())
+	blocks := d.flow("", []item{{lead: say("tool"), text: tool}, {lead: say("lubrication"), text: state}}, d.body())
+	blocks[len(blocks)-1].tight = true
+	return append(blocks, d.paragraph(say("friction_assumed", "thread", d.span(f.Thread), "head", d.span(f.Head)), d.small()))
 }
 
 // The drawing of the order takes so much of the page, and its digits must be so
 // high to be followed; else it gets a page of its own.
 const (
-	drawingWidth   = 58.0 // mm
-	readableDigits = 1.7  // mm
+	drawingWidth   = 60.0 // mm
+	readableDigits = 2.0  // mm
 )
 
 // orderAndSteps puts the drawing of the order beside the steps, or after them on
@@ -151,19 +176,20 @@ const (
 func (d *document) orderAndSteps(p planner.Plan) []block {
 	pat := p.Joint.Pattern
 	steps := d.steps(p)
-	side := d.mm(drawingWidth)
-	box := figure.Box{Width: side, Height: side}
+	box := figure.Box{Width: d.mm(drawingWidth), Height: d.mm(drawingWidth)}
 	drawn := p.Count > 1 && pat.Kind != pattern.Unstated
 	if drawn && figure.DigitOf(pat, box) >= readableDigits {
+		box.Height = figure.PatternHeight(pat, box)
 		return []block{d.orderBesideSteps(p, steps, box)}
 	}
-	if p.Count > 1 && !drawn {
-		steps = append([]item{{mark: "●", lead: d.words.say("order_heading"), text: d.words.say("order_unstated")}}, steps...)
+	if p.Count > 1 {
+		order := item{mark: "●", lead: d.words.say("order_lead"), text: d.words.say("order_unstated")}
+		if drawn {
+			order.text = d.words.say("order_other_page")
+		}
+		steps = append([]item{order}, steps...)
 	}
-	if drawn {
-		steps = append([]item{{mark: "●", lead: d.words.say("order_heading"), text: d.words.say("order_other_page")}}, steps...)
-	}
-	blocks := []block{d.listBlock(d.words.say("steps_heading"), steps, d.body())}
+	blocks := d.flow(d.words.say("steps_heading"), steps, d.body())
 	if drawn {
 		blocks = append(blocks, d.orderPage(p)...)
 	}
@@ -171,17 +197,17 @@ func (d *document) orderAndSteps(p planner.Plan) []block {
 }
 
 func (d *document) orderBesideSteps(p planner.Plan, steps []item, box figure.Box) block {
-	l := d.newList(d.words.say("steps_heading"), steps, d.wide()-box.Width-d.mm(3), d.body())
+	aside := box.Width + d.mm(4)
+	l := d.newList(d.words.say("steps_heading"), steps, d.wide()-aside, d.body())
 	note := d.wrap(d.words.say("order_note"), box.Width, d.small())
-	drawing := d.mm(bodySize)*lineHeight*1.25 + box.Height + float64(len(note))*d.mm(smallSize)*lineHeight
+	head := d.body().Size * headingHeight
+	drawing := head + box.Height + d.mm(1) + float64(len(note))*d.mm(smallSize)*lineHeight
 	return block{height: max(l.height(), drawing), draw: func(y float64) {
-		head := bold(d.body())
-		head.Size *= 1.15
-		d.canvas.Text(d.left(), y+head.Size, d.words.say("order_heading"), head)
-		top := y + d.mm(bodySize)*lineHeight*1.25
-		figure.BoltPattern(d.canvas, p.Joint.Pattern, figure.Box{X: d.left(), Y: top, Width: box.Width, Height: box.Height})
-		d.lines(note, d.left(), top+box.Height, d.small())
-		l.draw(d.left()+box.Width+d.mm(3), y)
+		d.heading(d.words.say("order_heading"), d.left(), y, d.body())
+		box.X, box.Y = d.left(), y+head
+		figure.BoltPattern(d.canvas, p.Joint.Pattern, box)
+		d.lines(note, d.left(), box.Y+box.Height+d.mm(1), d.small())
+		l.draw(d.left()+aside, y)
 	}}
 }
 
@@ -200,128 +226,36 @@ func (d *document) numbering(p planner.Plan) string {
 // follow, it lists the bolt numbers.
 func (d *document) orderPage(p planner.Plan) []block {
 	pat := p.Joint.Pattern
-	side := d.wide()
-	heading := d.paragraph(d.words.say("order_heading"), bold(figure.Type{Size: d.mm(nameSize)}))
-	heading.fresh = true
-	if figure.DigitOf(pat, figure.Box{Width: side, Height: side}) >= readableDigits {
-		note := d.paragraph(d.words.say("order_note"), d.body())
-		drawing := block{height: side, draw: func(y float64) {
-			figure.BoltPattern(d.canvas, pat, figure.Box{X: d.left(), Y: y, Width: side, Height: side})
-		}}
-		return []block{heading, drawing, note}
+	note := d.wrap(d.words.say("order_note"), d.wide(), d.body())
+	head := d.body().Size * headingHeight
+	below := d.mm(1) + float64(len(note))*d.body().Size*lineHeight
+	box := figure.Box{X: d.left(), Width: d.wide(), Height: min(d.wide(), d.bottom(p)-d.top(p)-head-below)}
+	if figure.DigitOf(pat, box) >= readableDigits {
+		box.Height = figure.PatternHeight(pat, box)
+		return []block{{height: head + box.Height + below, fresh: true, draw: func(y float64) {
+			d.heading(d.words.say("order_heading"), d.left(), y, d.body())
+			box.Y = y + head
+			figure.BoltPattern(d.canvas, pat, box)
+			d.lines(note, d.left(), box.Y+box.Height+d.mm(1), d.body())
+		}}}
 	}
+	return d.orderList(p)
+}
+
+// orderList lists the bolt numbers in their order, on a page of its own.
+func (d *document) orderList(p planner.Plan) []block {
+	pat := p.Joint.Pattern
 	order := pat.Order()
 	numbers := make([]string, len(order))
 	for i, n := range order {
 		numbers[i] = strconv.Itoa(n)
 	}
-	blocks := []block{heading, d.paragraph(d.numbering(p), d.body())}
+	blocks := d.flow(d.words.say("order_heading"), []item{{text: d.numbering(p)}}, d.body())
+	blocks[0].fresh = true
 	const perBlock = 120 // so that a long list flows over pages
 	for from := 0; from < len(numbers); from += perBlock {
 		part := strings.Join(numbers[from:min(from+perBlock, len(numbers))], " · ")
 		blocks = append(blocks, d.paragraph(d.words.say("order_list", "list", part), d.body()))
 	}
 	return blocks
-}
-
-// steps are the numbered actions of the method.
-func (d *document) steps(p planner.Plan) []item {
-	say := d.words.say
-	snug, target := quantity.Trim(p.Angle.SnugTorque), quantity.Trim(p.Torque.Target)
-	texts := []string{say("step_read"), say("step_check")}
-	if p.Joint.Friction.State != "" {
-		texts = append(texts, say("step_lubricate"))
-	}
-	texts = append(texts, say("step_hand"))
-	if p.Joint.Nut != nil {
-		texts = append(texts, say("step_hold"))
-	}
-	several := p.Count > 1
-	switch {
-	case isAngle(p):
-		texts = append(texts, say("step_snug", "snug", snug), say("step_mark_start"), say("step_angle", "angle", quantity.Trim(p.Angle.FromSnug)))
-	case several:
-		texts = append(texts, say("step_snug", "snug", snug), say("step_final", "target", target))
-		if p.Count >= 4 {
-			texts = append(texts, say("step_check_pass", "target", target))
-		}
-	default:
-		texts = append(texts, say("step_final_one", "target", target))
-	}
-	texts = append(texts, say("step_record"))
-	items := make([]item, len(texts))
-	for i, t := range texts {
-		items[i] = item{mark: strconv.Itoa(i + 1), text: t}
-	}
-	return items
-}
-
-// acceptance holds what a tool that reads may show, rounded inwards: whole
-// degrees, and torques to a tenth of a N.m or three figures.
-type acceptance struct{ lowAngle, highAngle, lowTorque, highTorque string }
-
-func accept(p planner.Plan) acceptance {
-	step := math.Pow(10, math.Floor(math.Log10(math.Max(p.Torque.WindowHigh, 1e-3)))-2)
-	step = math.Max(step, 0.01)
-	return acceptance{
-		lowAngle:   fmt.Sprintf("%.0f", quantity.RoundUp(p.Angle.Low, 1)),
-		highAngle:  fmt.Sprintf("%.0f", quantity.RoundDown(p.Angle.High, 1)),
-		lowTorque:  quantity.Trim(quantity.RoundUp(p.Torque.WindowLow, step)),
-		highTorque: quantity.Trim(quantity.RoundDown(p.Torque.WindowHigh, step)),
-	}
-}
-
-// notOK says what counts as a failure and what to do then.
-func (d *document) notOK(p planner.Plan) block {
-	say := d.words.say
-	a := accept(p)
-	var items []item
-	if isAngle(p) {
-		items = append(items,
-			item{"✓", say("accept_heading_torque"), say("accept_end", "anglelow", a.lowAngle, "anglehigh", a.highAngle, "low", a.lowTorque, "high", a.highTorque)},
-			item{"×", "", say("nok_angle", "low", a.lowAngle, "high", a.highAngle)},
-			item{"×", "", say("nok_torque", "low", a.lowTorque, "high", a.highTorque)})
-	} else {
-		items = append(items,
-			item{"×", "", say("nok_spin")},
-			item{"✓", say("accept_heading"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low", a.lowAngle, "high", a.highAngle)})
-	}
-	items = append(items, item{"×", "", say("nok_early")}, item{"×", "", say("nok_parts")})
-	items = append(items, item{"→", say("nok_do_heading"), say("nok_do")})
-	l := d.newList(say("nok_heading"), items, d.wide()-d.mm(4), d.body())
-	return d.framed(l.height(), 0.5, l.draw)
-}
-
-// heavyTorque is from where the reaction of the tool needs a warning, N.m;
-// common practice, no source.
-const heavyTorque = 200
-
-// warnings lists the hazards to people that apply.
-func (d *document) warnings(p planner.Plan) block {
-	var items []item
-	for _, c := range d.cautions {
-		applies := c.when == "always" ||
-			(c.when == "seal" && p.Joint.Clamp.SealPressure > 0) ||
-			(c.when == "heavy" && p.Torque.WindowHigh >= heavyTorque) ||
-			(c.when == "nut" && p.Joint.Nut != nil)
-		if applies {
-			items = append(items, item{"▲", c.hazard, c.text})
-		}
-	}
-	return d.listBlock(d.words.say("caution_heading"), items, d.body())
-}
-
-// record is the table to sign.
-func (d *document) record() block {
-	say := d.words.say
-	cells := []string{say("sign_person"), say("sign_date"), say("sign_tool"), say("sign_due"), say("sign_checked")}
-	row := d.mm(12)
-	return block{height: row, draw: func(y float64) {
-		width := d.wide() / float64(len(cells))
-		for i, c := range cells {
-			x := d.left() + float64(i)*width
-			d.rectangle(x, y, width, row, 1, figure.Stroke{Width: d.mm(0.25)})
-			d.canvas.Text(x+d.mm(1), y+d.mm(smallSize)*1.2, c, d.fit(c, width-d.mm(2), d.small()))
-		}
-	}}
 }

@@ -1,6 +1,7 @@
 package card
 
 import (
+	"math"
 	"strconv"
 
 	"clampback/planner"
@@ -12,6 +13,7 @@ type block struct {
 	height float64 // mm
 	draw   func(y float64)
 	fresh  bool // begins a page
+	tight  bool // the next block follows without a gap
 }
 
 // sheet is one page: its blocks with their places.
@@ -25,13 +27,12 @@ type sheet struct {
 const (
 	margin     = 8.0
 	gap        = 3.2  // between blocks
-	bodySize   = 3.3  // 9.4 point
-	smallSize  = 2.6  // 7.4 point: footer and calculation page only
+	bodySize   = 3.5  // 9.9 point
+	leastBody  = 3.2  // 9.1 point: what would not fit on a page shrinks to this
+	smallSize  = 2.6  // 7.4 point: foot, side notes and calculation page only
 	titleSize  = 6.4  // id of the joint
 	nameSize   = 4.6  // its name
-	bigSize    = 21.2 // of the setting: digits 15.5 mm high
 	lineHeight = 1.28 // over the type size
-	footer     = 8.0  // kept free at the bottom
 )
 
 func (d *document) mm(v float64) float64 { return v * d.paper.scale }
@@ -40,15 +41,55 @@ func (d *document) left() float64  { return d.mm(margin) }
 func (d *document) right() float64 { return d.paper.width - d.mm(margin) }
 func (d *document) wide() float64  { return d.right() - d.left() }
 
-func (d *document) body() figure.Type  { return figure.Type{Size: d.mm(bodySize)} }
+func (d *document) body() figure.Type  { return figure.Type{Size: d.mm(d.bodySize)} }
 func (d *document) small() figure.Type { return figure.Type{Size: d.mm(smallSize)} }
 
 func bold(t figure.Type) figure.Type { t.Bold = true; return t }
 
+// top and bottom are the ends of what a page of a joint holds between head and
+// foot, mm.
+func (d *document) top(p planner.Plan) float64 {
+	return d.mm(margin) + d.layHead(p).height + d.mm(gap)
+}
+
+func (d *document) bottom(p planner.Plan) float64 {
+	return d.paper.height - d.mm(margin) - d.footHeight(p) - d.mm(gap)/2
+}
+
+// shrunk lays blocks out that should share a page: in body type, or in smaller
+// type down to leastBody where they would not fit. What still does not fit then
+// runs on to another page.
+func (d *document) shrunk(p planner.Plan, lay func(*document) []block) []block {
+	room := d.bottom(p) - d.top(p)
+	sized := *d
+	for {
+		blocks := lay(&sized)
+		if stack(blocks, d.mm(gap)) <= room || sized.bodySize <= leastBody {
+			return blocks
+		}
+		sized.bodySize = max(leastBody, sized.bodySize-0.1)
+	}
+}
+
+// stack returns the height of blocks one below the other, mm; endless where one
+// of them begins another page.
+func stack(blocks []block, between float64) float64 {
+	height := 0.0
+	for i, b := range blocks {
+		if i > 0 && b.fresh {
+			return math.Inf(1)
+		}
+		height += b.height
+		if i < len(blocks)-1 && !b.tight {
+			height += between
+		}
+	}
+	return height
+}
+
 // paginate puts blocks on pages one below the other.
 func (d *document) paginate(p planner.Plan, blocks []block, hatched bool) []sheet {
-	top := d.mm(margin) + d.headHeight(p) + d.mm(gap)
-	bottom := d.paper.height - d.mm(margin) - d.mm(footer)
+	top, bottom := d.top(p), d.bottom(p)
 	sheets := []sheet{{hatched: hatched}}
 	y := top
 	for _, b := range blocks {
@@ -60,7 +101,10 @@ func (d *document) paginate(p planner.Plan, blocks []block, hatched bool) []shee
 		}
 		current.blocks = append(current.blocks, b)
 		current.at = append(current.at, y)
-		y += b.height + d.mm(gap)
+		y += b.height
+		if !b.tight {
+			y += d.mm(gap)
+		}
 	}
 	return sheets
 }
@@ -68,7 +112,7 @@ func (d *document) paginate(p planner.Plan, blocks []block, hatched bool) []shee
 // print draws a page with its head and foot.
 func (d *document) print(p planner.Plan, s sheet, page, pages int) {
 	if s.hatched {
-		d.hatch()
+		d.hatch(p, s)
 	}
 	d.head(p)
 	for i, b := range s.blocks {
@@ -77,65 +121,91 @@ func (d *document) print(p planner.Plan, s sheet, page, pages int) {
 	d.foot(p, page, pages)
 }
 
-// headLines are the lines of the page's head: id and name, and what they belong
-// to at the right.
-func (d *document) headLines(p planner.Plan) (name, belongs []string) {
-	name = d.wrap(p.Name, d.wide()*0.62, figure.Type{Size: d.mm(nameSize), Bold: true})
-	j := p.Joint
-	revision := j.Revision
-	if revision == "" {
-		revision = d.words.say("not_stated")
-	}
-	belongs = d.wrap(j.Assembly, d.wide()*0.34, d.body())
-	belongs = append(belongs, d.words.say("revision", "revision", revision))
-	return name, belongs
+// pageHead is the head of a joint's pages, laid out: id and name at the left, what
+// they belong to at the right, or below the id where that needs the whole width.
+type pageHead struct {
+	id      figure.Type
+	name    []string
+	face    figure.Type // of the name
+	belongs []string
+	below   bool // belongs stands below the id
+	height  float64
 }
 
-func (d *document) headHeight(p planner.Plan) float64 {
-	name, belongs := d.headLines(p)
-	left := d.mm(titleSize)*lineHeight + float64(len(name))*d.mm(nameSize)*lineHeight
-	return max(left, float64(len(belongs))*d.mm(bodySize)*lineHeight) + d.mm(1)
+func (d *document) layHead(p planner.Plan) pageHead {
+	h := pageHead{id: figure.Type{Size: d.mm(titleSize), Bold: true}, face: figure.Type{Size: d.mm(nameSize), Bold: true}}
+	left, right := d.wide()*0.62, d.wide()*0.34
+	if d.canvas.Width(p.ID, h.id) > left {
+		h.id, h.below = d.fit(p.ID, d.wide(), h.id), true
+	}
+	h.name = d.wrap(p.Name, left, h.face)
+	if len(h.name) > 2 {
+		h.face = bold(d.body())
+		h.name = d.wrap(p.Name, left, h.face)
+	}
+	h.belongs = append(d.wrap(p.Joint.Assembly, right, d.body()), d.wrap(d.revision(p), right, d.body())...)
+	names := float64(len(h.name)) * h.face.Size * lineHeight
+	side := float64(len(h.belongs)) * d.body().Size * lineHeight
+	if h.below {
+		h.height = h.id.Size*lineHeight + max(names, side)
+	} else {
+		h.height = max(h.id.Size*lineHeight+names, side)
+	}
+	h.height += d.mm(1)
+	return h
 }
 
 func (d *document) head(p planner.Plan) {
-	name, belongs := d.headLines(p)
+	h := d.layHead(p)
 	top := d.mm(margin)
-	id := d.fit(p.ID, d.wide()*0.62, figure.Type{Size: d.mm(titleSize), Bold: true})
-	y := top + d.mm(titleSize)
-	d.canvas.Text(d.left(), y, p.ID, id)
-	for _, line := range name {
-		y += d.mm(nameSize) * lineHeight
-		d.canvas.Text(d.left(), y, line, figure.Type{Size: d.mm(nameSize), Bold: true})
+	y := top + h.id.Size
+	d.canvas.Text(d.left(), y, p.ID, h.id)
+	for _, line := range h.name {
+		y += h.face.Size * lineHeight
+		d.canvas.Text(d.left(), y, line, h.face)
 	}
 	y = top
-	for _, line := range belongs {
-		y += d.mm(bodySize) * lineHeight
-		t := d.body()
-		t.Anchor = figure.End
-		d.canvas.Text(d.right(), y, line, t)
+	if h.below {
+		y += h.id.Size * lineHeight
 	}
-	rule := top + d.headHeight(p)
-	d.canvas.Line(d.left(), rule, d.right(), rule, figure.Stroke{Width: d.mm(0.5)})
+	t := d.body()
+	t.Anchor = figure.End
+	d.lines(h.belongs, d.right(), y, t)
+	d.canvas.Line(d.left(), top+h.height, d.right(), top+h.height, figure.Stroke{Width: d.mm(0.5)})
+}
+
+// footLines are the lines of the foot above the page number.
+func (d *document) footLines(p planner.Plan) []string {
+	text := d.words.say("footer_tested")
+	if p.Joint.PreparedBy != "" {
+		text = d.words.say("prepared_by", "name", p.Joint.PreparedBy) + " " + text
+	}
+	return d.wrap(text, d.wide(), d.small())
+}
+
+func (d *document) footHeight(p planner.Plan) float64 {
+	return (float64(len(d.footLines(p))+1) + 0.4) * d.mm(smallSize) * lineHeight
 }
 
 func (d *document) foot(p planner.Plan, page, pages int) {
-	y := d.paper.height - d.mm(margin)
-	d.canvas.Line(d.left(), y-d.mm(smallSize)*2.6, d.right(), y-d.mm(smallSize)*2.6, figure.Stroke{Width: d.mm(0.2)})
-	first := d.words.say("footer_tested")
-	if p.Joint.PreparedBy != "" {
-		first = d.words.say("prepared_by", "name", p.Joint.PreparedBy) + ". " + first
-	}
+	bottom := d.paper.height - d.mm(margin)
+	y := bottom - d.footHeight(p)
+	d.canvas.Line(d.left(), y, d.right(), y, figure.Stroke{Width: d.mm(0.2)})
+	d.lines(d.footLines(p), d.left(), y+0.4*d.mm(smallSize), d.small())
 	number := d.words.say("page", "page", strconv.Itoa(page), "pages", strconv.Itoa(pages))
 	end := bold(d.small())
 	end.Anchor = figure.End
-	d.canvas.Text(d.right(), y, number, end)
+	base := bottom - 0.25*d.mm(smallSize)
+	d.canvas.Text(d.right(), base, number, end)
 	room := d.wide() - d.canvas.Width(number, end) - d.mm(3)
-	second := p.ID + ", " + d.headRevision(p)
-	d.canvas.Text(d.left(), y-d.mm(smallSize)*1.25, first, d.fit(first, d.wide(), d.small()))
-	d.canvas.Text(d.left(), y, second, d.fit(second, room, d.small()))
+	which := p.ID + ", " + d.revision(p)
+	if d.canvas.Width(which, d.small()) > room {
+		which = p.ID // the head holds the revision in full
+	}
+	d.canvas.Text(d.left(), base, which, d.fit(which, room, d.small()))
 }
 
-func (d *document) headRevision(p planner.Plan) string {
+func (d *document) revision(p planner.Plan) string {
 	revision := p.Joint.Revision
 	if revision == "" {
 		revision = d.words.say("not_stated")
@@ -145,7 +215,12 @@ func (d *document) headRevision(p planner.Plan) string {
 
 // wrap breaks a text into lines of a width.
 func (d *document) wrap(text string, width float64, t figure.Type) []string {
-	return figure.Wrap(figure.Printable(text), width, func(s string) float64 { return d.canvas.Width(s, t) })
+	return d.wrapAfter(0, text, width, t)
+}
+
+// wrapAfter breaks a text into lines of a width, the first after an indent.
+func (d *document) wrapAfter(indent float64, text string, width float64, t figure.Type) []string {
+	return figure.Wrap(figure.Printable(text), indent, width, func(s string) float64 { return d.canvas.Width(s, t) })
 }
 
 // fit shrinks type so that a line keeps within a width.

@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strings"
 
+	"clampback/report/figure"
 	"clampback/templates"
 )
 
@@ -44,7 +45,8 @@ func readCautions(folder fs.FS) ([]caution, error) {
 	return cautions, nil
 }
 
-// say returns a phrase with its {names} filled from pairs of name and value.
+// say returns a phrase with its {names} filled from pairs of name and value. A
+// value stays on the line of the word behind it, which most often is its unit.
 func (p *phrases) say(key string, pairs ...string) string {
 	text, ok := p.texts[key]
 	if !ok || text == "" {
@@ -54,11 +56,12 @@ func (p *phrases) say(key string, pairs ...string) string {
 	if len(pairs) == 0 {
 		return text
 	}
-	fill := make([]string, len(pairs))
+	fill := make([]string, 0, 2*len(pairs))
 	for i := 0; i < len(pairs); i += 2 {
-		fill[i], fill[i+1] = "{"+pairs[i]+"}", pairs[i+1]
-		if !strings.Contains(text, fill[i]) {
-			p.note(fmt.Sprintf("the phrase %q lacks %s", key, fill[i]))
+		name, value := "{"+pairs[i]+"}", pairs[i+1]
+		fill = append(fill, name+" ", value+string(figure.NoBreak), name, value)
+		if !strings.Contains(text, name) {
+			p.note(fmt.Sprintf("the phrase %q lacks %s", key, name))
 		}
 	}
 	return strings.NewReplacer(fill...).Replace(text)

@@ -62,6 +62,7 @@ type document struct {
 	cautions []caution
 	options  Options
 	paper    Paper
+	bodySize float64 // of body type on A5, mm
 }
 
 func newDocument(o Options, title string) (*document, error) {
@@ -85,7 +86,7 @@ func newDocument(o Options, title string) (*document, error) {
 	pdf.SetProducer("clampback", true)
 	pdf.SetTitle(figure.Printable(title), true)
 	pdf.SetAutoPageBreak(false, 0)
-	return &document{pdf, figure.NewPDF(pdf), words, cautions, o, o.Paper}, nil
+	return &document{pdf, figure.NewPDF(pdf), words, cautions, o, o.Paper, bodySize}, nil
 }
 
 // joint writes all pages of a joint.

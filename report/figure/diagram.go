@@ -14,9 +14,11 @@ import (
 // JointDiagram draws the joint diagram to scale into a box: force over change of
 // length, the bolt's line rising, the clamped parts' lines falling, the range of
 // preload as a band, and at the lowest preload after losses the operating force
-// with its two shares and the residual clamp it leaves.
-func JointDiagram(c Canvas, p planner.Plan, box Box) {
+// with its two shares and the residual clamp it leaves. The words come from say,
+// by the keys of the cards' words that begin with diagram_.
+func JointDiagram(c Canvas, p planner.Plan, box Box, say Words) {
 	d := newDiagram(c, p.Diagram, box)
+	d.say = say
 	d.axes()
 	d.band()
 	d.limits()
@@ -25,10 +27,16 @@ func JointDiagram(c Canvas, p planner.Plan, box Box) {
 	d.labels()
 }
 
+// Words returns the phrase of a key with its {names} filled from pairs of name
+// and value.
+type Words func(key string, pairs ...string) string
+
 // diagram is a joint diagram while it is drawn.
 type diagram struct {
 	c     Canvas
+	say   Words
 	d     stiffness.Diagram
+	size  float64 // of the type of labels, mm
 	plot  Box     // the area of the axes
 	side  float64 // x where the labels begin
 	right float64 // x where they end
@@ -44,7 +52,12 @@ type note struct {
 	text string
 }
 
-const noteSize = 2.7 // mm, type of labels
+// noteSize is the type of labels in a drawing of drawingWidth, mm; both grow
+// together.
+const (
+	noteSize     = 2.7
+	drawingWidth = 132.0
+)
 
 // The strokes of the diagram.
 var (
@@ -54,11 +67,12 @@ var (
 )
 
 func newDiagram(c Canvas, d stiffness.Diagram, box Box) *diagram {
-	const left, below, above = 13, 11, 5
-	side := math.Min(54, 0.42*box.Width)
+	size := noteSize * box.Width / drawingWidth
+	left, below, above := 4.8*size, 4*size, 1.9*size
+	side := 0.41 * box.Width
 	g := &diagram{
-		c: c, d: d,
-		plot: Box{box.X + left, box.Y + above, box.Width - left - side - 2, box.Height - above - below},
+		c: c, d: d, size: size,
+		plot: Box{box.X + left, box.Y + above, box.Width - left - side - size, box.Height - above - below},
 		side: box.X + box.Width - side, right: box.X + box.Width,
 	}
 	top := math.Max(d.Limit, math.Max(d.Preload.High, g.serviceForce()+d.BoltShare))
@@ -84,19 +98,19 @@ func (g *diagram) line(x1, f1, x2, f2 float64, s Stroke) {
 func (g *diagram) axes() {
 	g.line(0, 0, g.reach, 0, medium)
 	g.line(0, 0, 0, g.force, medium)
-	tick := Type{Size: noteSize, Anchor: End}
+	tick := Type{Size: g.size, Anchor: End}
 	for _, f := range roundSteps(g.force/1000, 5) {
 		p := g.at(0, f*1000)
 		g.c.Line(p.X-1, p.Y, p.X, p.Y, thin)
-		g.c.Text(p.X-1.5, p.Y+noteSize*0.36, fmt.Sprintf("%g", f), tick)
+		g.c.Text(p.X-1.5, p.Y+g.size*0.36, fmt.Sprintf("%g", f), tick)
 	}
 	for _, l := range roundSteps(g.reach*1000, 4) {
 		p := g.at(l/1000, 0)
 		g.c.Line(p.X, p.Y, p.X, p.Y+1, thin)
-		g.c.Text(p.X, p.Y+1.4+noteSize, fmt.Sprintf("%g", l), Type{Size: noteSize, Anchor: Middle})
+		g.c.Text(p.X, p.Y+1.4+g.size, fmt.Sprintf("%g", l), Type{Size: g.size, Anchor: Middle})
 	}
-	g.c.Text(g.plot.X-1.5, g.plot.Y-1.5, "force, kN", Type{Size: noteSize, Anchor: Start})
-	g.c.Text(g.plot.X+g.plot.Width, g.plot.Y+g.plot.Height+2*noteSize+2.6, "change of length, um", Type{Size: noteSize, Anchor: End})
+	g.c.Text(g.plot.X-1.5, g.plot.Y-1.5, g.say("diagram_force"), Type{Size: g.size, Anchor: Start})
+	g.c.Text(g.plot.X+g.plot.Width, g.plot.Y+g.plot.Height+3*g.size, g.say("diagram_length"), Type{Size: g.size, Anchor: End})
 }
 
 // roundSteps returns multiples of a round step up to top, about n of them; none
@@ -126,16 +140,16 @@ func (g *diagram) band() {
 	low, high := g.d.Preload.Low, g.d.Preload.High
 	a, b := g.at(0, low), g.at(g.reach, high)
 	g.c.Polygon([]Point{{a.X, a.Y}, {b.X, a.Y}, {b.X, b.Y}, {a.X, b.Y}}, 0.88, Stroke{})
-	g.note(g.reach, high, fmt.Sprintf("highest preload %s kN", kilo(high, true)))
-	g.note(g.reach, low, fmt.Sprintf("lowest preload %s kN", kilo(low, false)))
+	g.note(g.reach, high, g.say("diagram_highest", "force", kilo(high, true)))
+	g.note(g.reach, low, g.say("diagram_lowest", "force", kilo(low, false)))
 }
 
 // limits draws what the joint tolerates and what it must keep.
 func (g *diagram) limits() {
 	g.line(0, g.d.Limit, g.reach, g.d.Limit, Stroke{Width: 0.5, Dash: []float64{3, 1}})
-	g.note(g.reach, g.d.Limit, fmt.Sprintf("tolerated %s kN", kilo(g.d.Limit, false)))
+	g.note(g.reach, g.d.Limit, g.say("diagram_limit", "force", kilo(g.d.Limit, false)))
 	g.line(0, g.d.RequiredResidual, g.reach, g.d.RequiredResidual, Stroke{Width: 0.5, Dash: []float64{1, 1}})
-	g.note(g.reach, g.d.RequiredResidual, fmt.Sprintf("residual clamp required %s kN", kilo(g.d.RequiredResidual, true)))
+	g.note(g.reach, g.d.RequiredResidual, g.say("diagram_required", "force", kilo(g.d.RequiredResidual, true)))
 }
 
 // lines draws bolt and clamped parts as springs: heavy from the lowest preload
@@ -153,13 +167,15 @@ func (g *diagram) lines() {
 	}
 	g.line(low*bolt, low, low*(bolt+parts), 0, heavy)
 	g.line(0, low, low*bolt, low, Stroke{Width: 0.2, Dash: []float64{0.6, 0.6}})
-	label := Type{Size: noteSize, Bold: true}
+	label := Type{Size: g.size, Bold: true}
 	b := g.at(0.45*high*bolt, 0.45*high)
-	g.c.Text(b.X-1-g.c.Width("bolt", label), b.Y, "bolt", label)
+	name := g.say("diagram_bolt")
+	g.c.Text(b.X-1-g.c.Width(name, label), b.Y, name, label)
 	q := g.at(low*bolt+0.8*low*parts, 0.2*low)
-	g.c.Text(q.X-2-g.c.Width("parts", label), q.Y, "parts", label)
+	name = g.say("diagram_parts")
+	g.c.Text(q.X-2-g.c.Width(name, label), q.Y, name, label)
 	if g.d.Loss > 0 {
-		g.note(low*bolt, low, fmt.Sprintf("after losses of %s kN: %s kN", kilo(g.d.Loss, true), kilo(low, false)))
+		g.note(low*bolt, low, g.say("diagram_losses", "loss", kilo(g.d.Loss, true), "force", kilo(low, false)))
 	}
 }
 
@@ -174,16 +190,17 @@ func (g *diagram) load() {
 	x := low * g.d.BoltCompliance
 	if g.d.Axial.High > 0 {
 		g.arrow(x, low, low+g.d.BoltShare)
-		g.arrow(x, low, low-g.d.ClampShare)
-		g.note(x, low+g.d.BoltShare, fmt.Sprintf("bolt under load %s kN (+%s)", kilo(low+g.d.BoltShare, true), kilo(g.d.BoltShare, true)))
-		g.note(x, low-g.d.ClampShare, fmt.Sprintf("residual clamp %s kN (-%s)", kilo(low-g.d.ClampShare, false), kilo(g.d.ClampShare, true)))
+		left := math.Max(0, g.d.ResidualClamp.Low) // a gaping interface holds nothing
+		g.arrow(x, low, left)
+		g.note(x, low+g.d.BoltShare, g.say("diagram_bolt_load", "force", kilo(low+g.d.BoltShare, true), "share", kilo(g.d.BoltShare, true)))
+		g.note(x, left, g.say("diagram_clamp_load", "force", kilo(g.d.ResidualClamp.Low, false), "share", kilo(g.d.ClampShare, true)))
 	}
 	if g.d.Axial.Low < 0 {
 		compression := -g.d.Axial.Low
 		g.arrow(x, low, low+(1-g.d.LoadFactor)*compression)
 		g.arrow(x, low, low-g.d.LoadFactor*compression)
-		g.note(x, low+(1-g.d.LoadFactor)*compression, fmt.Sprintf("clamp under compression %s kN", kilo(low+(1-g.d.LoadFactor)*compression, true)))
-		g.note(x, low-g.d.LoadFactor*compression, fmt.Sprintf("bolt under compression %s kN", kilo(low-g.d.LoadFactor*compression, false)))
+		g.note(x, low+(1-g.d.LoadFactor)*compression, g.say("diagram_clamp_compression", "force", kilo(low+(1-g.d.LoadFactor)*compression, true)))
+		g.note(x, low-g.d.LoadFactor*compression, g.say("diagram_bolt_compression", "force", kilo(low-g.d.LoadFactor*compression, false)))
 	}
 }
 
@@ -204,7 +221,7 @@ func (g *diagram) note(length, force float64, text string) {
 // each with a thin leader to its height.
 func (g *diagram) labels() {
 	slices.SortStableFunc(g.notes, func(a, b note) int { return cmp.Compare(a.at, b.at) })
-	const spacing = noteSize * 1.35
+	spacing := g.size * 1.35
 	y := make([]float64, len(g.notes))
 	for i, n := range g.notes {
 		y[i] = n.at
@@ -221,7 +238,7 @@ func (g *diagram) labels() {
 	for i, n := range g.notes {
 		g.c.Line(n.from, n.at, g.side-4, n.at, Stroke{Width: 0.12, Grey: 0.5})
 		g.c.Line(g.side-4, n.at, g.side-1, y[i], Stroke{Width: 0.12, Grey: 0.5})
-		size := noteSize
+		size := g.size
 		if w := g.c.Width(n.text, Type{Size: size}); w > g.right-g.side {
 			size *= (g.right - g.side) / w
 		}

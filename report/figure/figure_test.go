@@ -15,7 +15,9 @@ import (
 
 	"clampback/planner"
 	"clampback/planner/pattern"
+	"clampback/planner/quantity"
 	"clampback/planner/register"
+	"clampback/planner/stiffness"
 	"clampback/report/figure"
 	"clampback/templates"
 )
@@ -72,11 +74,15 @@ func TestWrapLosesNothing(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		text := rapid.StringMatching(`[a-zA-Z ü漢]{0,80}`).Draw(t, "text")
 		width := rapid.Float64Range(1, 30).Draw(t, "width")
+		indent := rapid.Float64Range(0, width).Draw(t, "indent")
 		measure := func(s string) float64 { return float64(utf8.RuneCountInString(s)) }
-		lines := figure.Wrap(text, width, measure)
+		lines := figure.Wrap(text, indent, width, measure)
 		require.Equal(t, strings.Join(strings.Fields(text), ""), strings.ReplaceAll(strings.Join(lines, ""), " ", ""))
-		for _, l := range lines {
+		for i, l := range lines {
 			require.LessOrEqual(t, measure(l), width)
+			if i == 0 {
+				require.True(t, l == "" || indent+measure(l) <= width)
+			}
 		}
 	})
 }
@@ -93,22 +99,55 @@ func TestWidthsAgreeWithThePDFLibrary(t *testing.T) {
 	}
 }
 
+// spell stands in for the words of the cards: the key and what it is filled with.
+func spell(key string, pairs ...string) string {
+	return strings.Join(append([]string{key}, pairs...), " ")
+}
+
 // The diagram of every demo joint draws without a number that is none, labels
 // what it draws, and is the same every time.
 func TestJointDiagramOfDemo(t *testing.T) {
 	for _, p := range demoPlans(t) {
 		draw := func() string {
 			c := figure.NewSVG(130, 72)
-			figure.JointDiagram(c, p, figure.Box{Width: 130, Height: 72})
+			figure.JointDiagram(c, p, figure.Box{Width: 130, Height: 72}, spell)
 			return c.String()
 		}
 		first := draw()
 		assert.NotContains(t, first, "NaN", p.ID)
 		assert.NotContains(t, first, "Inf", p.ID)
-		for _, text := range []string{"force, kN", "change of length, um", ">bolt<", "tolerated", "residual clamp required"} {
+		for _, text := range []string{"diagram_force", "diagram_length", ">diagram_bolt<", "diagram_limit force", "diagram_required force"} {
 			assert.Contains(t, first, text, p.ID)
 		}
 		assert.Equal(t, first, draw())
+	}
+}
+
+// Where the drawn triangle ends is the residual clamp of the plan: the lowest
+// preload less the losses and the share of the load (the geometry of the joint
+// diagram, VDI 2230-1; 1e-6 N for the rounding of sums).
+func TestTriangleEndsAtTheResidualClamp(t *testing.T) {
+	for _, p := range demoPlans(t) {
+		d := p.Diagram
+		if d.Axial.High > 0 {
+			assert.InDelta(t, d.ResidualClamp.Low, d.Preload.Low-d.Loss-d.ClampShare, 1e-6, p.ID)
+		}
+	}
+}
+
+// A joint without any preload or with a gaping interface still draws.
+func TestJointDiagramOfHopelessJoints(t *testing.T) {
+	for _, spoil := range []func(*planner.Plan){
+		func(p *planner.Plan) { p.Diagram = stiffness.Diagram{} },
+		func(p *planner.Plan) { p.Diagram.Preload = quantity.Range{} },
+		func(p *planner.Plan) { p.Diagram.ResidualClamp.Low = -5000 },
+	} {
+		p := demoPlans(t)[0]
+		spoil(&p)
+		c := figure.NewSVG(130, 72)
+		figure.JointDiagram(c, p, figure.Box{Width: 130, Height: 72}, spell)
+		assert.NotContains(t, c.String(), "NaN")
+		assert.NotContains(t, c.String(), "Inf")
 	}
 }
 
@@ -122,5 +161,12 @@ func TestBoltPatternDrawsEveryBolt(t *testing.T) {
 		assert.Equal(t, len(p.Points), strings.Count(c.String(), "<text"))
 		assert.NotContains(t, c.String(), "NaN")
 	}
-	assert.GreaterOrEqual(t, figure.DigitOf(pattern.NewCircle(24, 460), figure.Box{Width: 58, Height: 58}), 1.7, "24 bolts on A5, mm")
+	assert.GreaterOrEqual(t, figure.DigitOf(pattern.NewCircle(24, 460), figure.Box{Width: 60, Height: 60}), 2.2, "24 bolts on A5, mm: 15 minutes of arc at 0.5 m, the least of NUREG-0700")
+	assert.Less(t, figure.PatternHeight(pattern.NewGrid(1, 4, 60, 80), figure.Box{Width: 60, Height: 60}), 12.0, "a row needs little height, mm")
+	for _, p := range []pattern.Pattern{pattern.NewGrid(1, 2, 48, 48), pattern.NewGrid(2, 4, 60, 80), pattern.NewGrid(3, 1, 9, 9), pattern.NewCircle(24, 460)} {
+		box := figure.Box{Width: 60, Height: 60}
+		whole := figure.DigitOf(p, box)
+		box.Height = figure.PatternHeight(p, box)
+		assert.InDelta(t, whole, figure.DigitOf(p, box), 1e-9, "the height it needs is enough: %v", p)
+	}
 }

@@ -48,24 +48,28 @@ func printableRune(r rune) rune {
 // DigitHeight is the height of a digit over the size of the type, of both faces.
 const DigitHeight = 0.729
 
-// Wrap breaks a text into lines that a measure finds no wider than width. A word
-// that is wider alone is broken between letters. No character is lost.
-func Wrap(text string, width float64, measure func(string) float64) []string {
+// Wrap breaks a text into lines that a measure finds no wider than width; the
+// first line begins after an indent, and is empty when the first word finds no
+// room behind it. A word that is wider alone is broken between letters. No
+// character is lost.
+func Wrap(text string, indent, width float64, measure func(string) float64) []string {
 	var lines []string
-	line, length := "", 0.0
+	line, length := "", indent
 	blank := measure(" ")
-	for _, word := range strings.Fields(text) {
+	for _, word := range strings.FieldsFunc(text, breakable) {
 		wide := measure(word)
 		if line != "" && length+blank+wide <= width {
 			line += " " + word
 			length += blank + wide
 			continue
 		}
-		if line != "" {
+		if line != "" || (length > 0 && length+wide > width) {
 			lines = append(lines, line)
+			length = 0
 		}
-		line, length = word, wide
-		if wide > width {
+		line = word
+		length += wide
+		if length > width {
 			pieces := breakWord(word, width, measure)
 			lines = append(lines, pieces[:len(pieces)-1]...)
 			line = pieces[len(pieces)-1]
@@ -77,6 +81,11 @@ func Wrap(text string, width float64, measure func(string) float64) []string {
 	}
 	return lines
 }
+
+// NoBreak is a blank at which no line ends.
+const NoBreak = '\u00a0'
+
+func breakable(r rune) bool { return unicode.IsSpace(r) && r != NoBreak }
 
 // breakWord cuts a word into pieces no wider than width, of at least a letter.
 func breakWord(word string, width float64, measure func(string) float64) []string {

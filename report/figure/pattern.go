@@ -35,6 +35,13 @@ func BoltPattern(c Canvas, p pattern.Pattern, box Box) float64 {
 // box, mm.
 func DigitOf(p pattern.Pattern, box Box) float64 { return layPattern(p, box).size * DigitHeight }
 
+// PatternHeight returns how much of a box's height BoltPattern needs at most, mm.
+func PatternHeight(p pattern.Pattern, box Box) float64 {
+	l := layPattern(p, box)
+	low, high := corners(p.Points)
+	return min(box.Height, (high.Y-low.Y)*l.scale+2*(l.radius+markEdge))
+}
+
 // patternLayout is a pattern fitted into a box.
 type patternLayout struct {
 	scale  float64 // page mm per joint mm
@@ -48,27 +55,51 @@ func (l patternLayout) place(p pattern.Point) Point {
 	return Point{l.middle.X + (p.X-l.centre.X)*l.scale, l.middle.Y - (p.Y-l.centre.Y)*l.scale}
 }
 
-// largestMark is the radius of a bolt's mark where there is room, mm.
-const largestMark = 4.2
+// largestMark is the radius of a bolt's mark where there is room, over the width
+// of the box; markEdge is kept free around it for its stroke, mm.
+const (
+	largestMark = 0.07
+	markEdge    = 0.5
+)
 
 func layPattern(p pattern.Pattern, box Box) patternLayout {
-	low, high := pattern.Point{X: math.Inf(1), Y: math.Inf(1)}, pattern.Point{X: math.Inf(-1), Y: math.Inf(-1)}
-	for _, q := range p.Points {
-		low.X, low.Y = math.Min(low.X, q.X), math.Min(low.Y, q.Y)
-		high.X, high.Y = math.Max(high.X, q.X), math.Max(high.Y, q.Y)
-	}
+	low, high := corners(p.Points)
 	l := patternLayout{
 		centre: pattern.Point{X: (low.X + high.X) / 2, Y: (low.Y + high.Y) / 2},
 		middle: Point{box.X + box.Width/2, box.Y + box.Height/2},
-		radius: largestMark,
+		radius: largestMark * box.Width,
 	}
-	room := 2 * (largestMark + 0.5)
-	l.scale = math.Min((box.Width-room)/math.Max(high.X-low.X, 1e-9), (box.Height-room)/math.Max(high.Y-low.Y, 1e-9))
-	l.radius = math.Min(largestMark, 0.46*closest(p.Points)*l.scale)
+	// Marks that must shrink leave more room for the pattern: fit once more.
+	near := closest(p.Points)
+	for range 2 {
+		room := 2 * (l.radius + markEdge)
+		l.scale = math.Min(fitting(high.X-low.X, box.Width-room), fitting(high.Y-low.Y, box.Height-room))
+		l.radius = math.Min(l.radius, 0.46*near*l.scale)
+	}
 	digits := len(strconv.Itoa(len(p.Points)))
 	// The widest number must fit into the mark: digits are 0.7 em wide in bold.
 	l.size = 2 * l.radius * 0.9 / math.Hypot(0.7*float64(digits), DigitHeight)
 	return l
+}
+
+// fitting returns the scale at which an extent fills some room. An extent of
+// nothing, in a row or a single bolt, fits at any scale.
+func fitting(extent, room float64) float64 {
+	const nothing = 1e-6 // mm
+	if extent < nothing {
+		return 1 / nothing
+	}
+	return room / extent
+}
+
+// corners returns the smallest and the largest coordinates of the bolts, mm.
+func corners(points []pattern.Point) (low, high pattern.Point) {
+	low, high = pattern.Point{X: math.Inf(1), Y: math.Inf(1)}, pattern.Point{X: math.Inf(-1), Y: math.Inf(-1)}
+	for _, q := range points {
+		low.X, low.Y = math.Min(low.X, q.X), math.Min(low.Y, q.Y)
+		high.X, high.Y = math.Max(high.X, q.X), math.Max(high.Y, q.Y)
+	}
+	return low, high
 }
 
 // closest returns the least distance between two bolts, mm; a large one for a
