@@ -1,6 +1,7 @@
 package card
 
 import (
+	"slices"
 	"strconv"
 	"strings"
 
@@ -22,7 +23,11 @@ func (d *document) instruction(p planner.Plan) []block {
 		return append(d.orderAndSteps(p), d.verdict(p), d.record())
 	})
 	back[0].fresh = true
-	return append(front, back...)
+	blocks := slices.Concat(front, back)
+	if p.Count > 1 && p.Joint.Pattern.Kind != pattern.Unstated && !d.drawnBesideSteps(p) {
+		blocks = append(blocks, d.orderPage(p)...)
+	}
+	return blocks
 }
 
 // isAngle reports whether the joint is tightened by torque and angle.
@@ -171,32 +176,38 @@ const (
 	readableDigits = 2.0  // mm
 )
 
-// orderAndSteps puts the drawing of the order beside the steps, or after them on
-// a page of its own.
+// besideSteps is the room for the drawing beside the steps.
+func (d *document) besideSteps() figure.Box {
+	return figure.Box{Width: d.mm(drawingWidth), Height: d.mm(drawingWidth)}
+}
+
+// drawnBesideSteps reports whether the order can be followed when it is drawn
+// beside the steps.
+func (d *document) drawnBesideSteps(p planner.Plan) bool {
+	return p.Count > 1 && p.Joint.Pattern.Kind != pattern.Unstated &&
+		figure.DigitOf(p.Joint.Pattern, d.besideSteps()) >= readableDigits
+}
+
+// orderAndSteps puts the drawing of the order beside the steps, or says where or
+// what the order is.
 func (d *document) orderAndSteps(p planner.Plan) []block {
-	pat := p.Joint.Pattern
 	steps := d.steps(p)
-	box := figure.Box{Width: d.mm(drawingWidth), Height: d.mm(drawingWidth)}
-	drawn := p.Count > 1 && pat.Kind != pattern.Unstated
-	if drawn && figure.DigitOf(pat, box) >= readableDigits {
-		box.Height = figure.PatternHeight(pat, box)
-		return []block{d.orderBesideSteps(p, steps, box)}
+	if d.drawnBesideSteps(p) {
+		return []block{d.orderBesideSteps(p, steps)}
 	}
 	if p.Count > 1 {
 		order := item{mark: "●", lead: d.words.say("order_lead"), text: d.words.say("order_unstated")}
-		if drawn {
+		if p.Joint.Pattern.Kind != pattern.Unstated {
 			order.text = d.words.say("order_other_page")
 		}
 		steps = append([]item{order}, steps...)
 	}
-	blocks := d.flow(d.words.say("steps_heading"), steps, d.body())
-	if drawn {
-		blocks = append(blocks, d.orderPage(p)...)
-	}
-	return blocks
+	return d.flow(d.words.say("steps_heading"), steps, d.body())
 }
 
-func (d *document) orderBesideSteps(p planner.Plan, steps []item, box figure.Box) block {
+func (d *document) orderBesideSteps(p planner.Plan, steps []item) block {
+	box := d.besideSteps()
+	box.Height = figure.PatternHeight(p.Joint.Pattern, box)
 	aside := box.Width + d.mm(4)
 	l := d.newList(d.words.say("steps_heading"), steps, d.wide()-aside, d.body())
 	note := d.wrap(d.words.say("order_note"), box.Width, d.small())

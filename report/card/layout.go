@@ -1,7 +1,6 @@
 package card
 
 import (
-	"math"
 	"strconv"
 
 	"clampback/planner"
@@ -71,14 +70,10 @@ func (d *document) shrunk(p planner.Plan, lay func(*document) []block) []block {
 	}
 }
 
-// stack returns the height of blocks one below the other, mm; endless where one
-// of them begins another page.
+// stack returns the height of blocks one below the other, mm.
 func stack(blocks []block, between float64) float64 {
 	height := 0.0
 	for i, b := range blocks {
-		if i > 0 && b.fresh {
-			return math.Inf(1)
-		}
 		height += b.height
 		if i < len(blocks)-1 && !b.tight {
 			height += between
