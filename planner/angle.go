@@ -60,11 +60,14 @@ func (w *work) angleWindow() {
 	snugLow, snugHigh := w.snugPreload()
 
 	w.window = window{
-		low:  w.line("ang_wlo", "smallest angle setting that secures the joint", (w.required-snugLow)*most+t.AngleTol, "deg", arithmetic),
-		high: w.line("ang_whi", "largest angle setting that the joint tolerates", (w.tolerated-snugHigh)*least-t.AngleTol, "deg", arithmetic),
+		low: w.line("ang_wlo", "smallest angle setting that secures the joint", (w.required-snugLow)*most+t.AngleTol,
+			"deg", arithmetic),
+		high: w.line("ang_whi", "largest angle setting that the joint tolerates",
+			(w.tolerated-snugHigh)*least-t.AngleTol, "deg", arithmetic),
 	}
 	w.window.target = settingIn(w.window, (math.Max(0, w.window.low)+w.window.high)/2, t.AngleStep, t.Aim)
-	w.angleSetting = w.lineBy("ang."+string(t.Aim), "ang", "target angle from snug, 0 when there is none", w.window.target, "deg", "largest or middle setting in the window")
+	w.angleSetting = w.lineBy("ang."+string(t.Aim), "ang", "target angle from snug, 0 when there is none",
+		w.window.target, "deg", "largest or middle setting in the window")
 	angle := w.window.target
 	if angle == 0 {
 		// Show what the most tolerable angle would give; a little where none is.
@@ -74,8 +77,10 @@ func (w *work) angleWindow() {
 	w.angleLow = w.lineBy("ang_lo.angle", "ang_lo", "smallest angle to accept", angle-t.AngleTol, "deg", arithmetic)
 	w.angleHigh = w.lineBy("ang_hi.angle", "ang_hi", "largest angle to accept", angle+t.AngleTol, "deg", arithmetic)
 
-	w.lowest = w.lineBy("F_Mmin.angle", "F_Mmin", "lowest preload that the setting gives", snugLow+w.angleLow/most, "N", arithmetic)
-	w.highest = w.lineBy("F_Mmax.angle", "F_Mmax", "highest preload that the setting gives", snugHigh+w.angleHigh/least, "N", arithmetic)
+	w.lowest = w.lineBy("F_Mmin.angle", "F_Mmin", "lowest preload that the setting gives", snugLow+w.angleLow/most,
+		"N", arithmetic)
+	w.highest = w.lineBy("F_Mmax.angle", "F_Mmax", "highest preload that the setting gives",
+		snugHigh+w.angleHigh/least, "N", arithmetic)
 	w.endTorque()
 }
 
@@ -83,7 +88,8 @@ func (w *work) angleWindow() {
 // A share is taken of the torque that would reach the limit at least friction.
 func (w *work) snugPreload() (low, high float64) {
 	t := w.joint.Tightening
-	reference := w.line("T_ref", "torque that reaches the limit at least friction", w.tolerated*w.friction.least/1000, "N.m", guideline+"R13")
+	reference := w.line("T_ref", "torque that reaches the limit at least friction", w.tolerated*w.friction.least/1000,
+		"N.m", guideline+"R13")
 	rule := "T_S.angle"
 	w.snug = snugOf(t, reference*1000)
 	if t.SnugTorque > 0 {
@@ -102,7 +108,8 @@ func (w *work) snugPreload() (low, high float64) {
 func (w *work) endTorque() {
 	k := w.friction
 	low := w.lineBy("T_lo.angle", "T_lo", "lowest torque to expect at the end", w.lowest*k.least/1000, "N.m", guideline+"R13")
-	high := w.lineBy("T_hi.angle", "T_hi", "highest torque to expect at the end", w.highest*k.most/1000, "N.m", guideline+"R13")
+	high := w.lineBy("T_hi.angle", "T_hi", "highest torque to expect at the end", w.highest*k.most/1000, "N.m",
+		guideline+"R13")
 	middle := w.lineBy("T_A.angle", "T_A", "torque to expect at the end, middle of the ranges",
 		(w.lowest+w.highest)/2*(k.least+k.most)/2/1000, "N.m", guideline+"R13")
 	w.torques = Torque{WindowLow: low, Target: middle, WindowHigh: high}

@@ -94,7 +94,8 @@ func (w *work) assumeShank() {
 		w.assumed("shank not stated: threaded to the head")
 		return
 	}
-	w.assumed(fmt.Sprintf("shank not stated: %.4g mm in the grip, from the thread length %.4g mm of %s", shank, thread, b.Head.Standard))
+	w.assumed(fmt.Sprintf("shank not stated: %.4g mm in the grip, from the thread length %.4g mm of %s", shank,
+		thread, b.Head.Standard))
 }
 
 // assumeMethod says what the method takes for granted in every joint.

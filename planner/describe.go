@@ -96,7 +96,8 @@ func (w *work) describeFriction() {
 	w.input("D_Ka", "outer diameter of the face that turns", turned.outer, "mm", w.joint.Bolt.Head.Source)
 	w.input("D_Ki", "inner diameter of the face that turns", turned.inner, "mm", stated)
 	w.line("D_Km", "effective diameter of the friction under the head", (turned.outer+turned.inner)/2, "mm", guideline+"R13")
-	w.line("lead", "lead angle of the thread, tangent", math.Tan(friction.LeadAngle(n.pitch, n.pitchDiameter)), "-", guideline+"R13")
+	w.line("lead", "lead angle of the thread, tangent", math.Tan(friction.LeadAngle(n.pitch, n.pitchDiameter)), "-",
+		guideline+"R13")
 
 	k := &w.friction
 	k.threadLow = w.line("k_G_min", "thread torque per clamp force, least friction",

@@ -37,7 +37,8 @@ func flange(t require.TestingT) planner.Joint {
 		Clamp:     planner.Clamp{Residual: 12000},
 		Loads:     planner.Loads{Axial: quantity.Range{High: 9500}, IntroductionFactor: &n},
 		Friction: planner.Friction{
-			Thread: quantity.Range{Low: 0.10, High: 0.14}, Head: quantity.Range{Low: 0.09, High: 0.13}, Source: "stated in the register",
+			Thread: quantity.Range{Low: 0.10, High: 0.14}, Head: quantity.Range{Low: 0.09,
+				High: 0.13}, Source: "stated in the register",
 		},
 		Tightening: planner.Tightening{
 			Method: planner.TorqueMethod, Tool: &planner.Tool{Tolerance: 0.04},
@@ -86,13 +87,15 @@ func drawJoint(t *rapid.T) planner.Joint {
 		j.Clamp.Transverse, j.Clamp.InterfaceFriction, j.Clamp.Interfaces = 500, 0.15, 1
 	}
 	*j.Loads.IntroductionFactor = rapid.Float64Range(0, 1).Draw(t, "n")
-	j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(rapid.Float64Range(-200, 600).Draw(t, "service"))}
+	j.Temperature = &planner.Temperature{Assembly: 20,
+		Service: quantity.Single(rapid.Float64Range(-200, 600).Draw(t, "service"))}
 	j.Friction.Thread = drawRange(t, "thread friction")
 	j.Friction.Head = drawRange(t, "head friction")
 	j.Tightening.Tool.Tolerance = rapid.Float64Range(0, 0.2).Draw(t, "tolerance")
 	switch rapid.IntRange(0, 2).Draw(t, "method") {
 	case 1:
-		j.Tightening.Scatter, j.Tightening.ScatterFactor = planner.GuideScatter, rapid.Float64Range(1.1, 2.5).Draw(t, "alpha_A")
+		j.Tightening.Scatter, j.Tightening.ScatterFactor = planner.GuideScatter, rapid.Float64Range(1.1, 2.5).Draw(t,
+			"alpha_A")
 	case 2:
 		j.Tightening.Method = planner.TorqueAndAngleMethod
 	}

@@ -113,6 +113,7 @@ func endFaces(end string, bearing float64, washer *fastener.Washer, part Part) [
 	spread := math.Min(bearing+1.6*washer.Thickness, math.Min(washer.OuterDiameter, part.OuterDiameter))
 	return []face{
 		{end, math.Min(bearing, washer.OuterDiameter), washer.InnerDiameter, washer.LimitingPressure, washer.Source},
-		{end + " washer", spread, math.Max(part.Hole, washer.InnerDiameter), part.Material.LimitingPressure, part.Material.Source},
+		{end + " washer", spread, math.Max(part.Hole, washer.InnerDiameter), part.Material.LimitingPressure,
+			part.Material.Source},
 	}
 }

@@ -35,7 +35,8 @@ func (w *work) limit() {
 		}
 	}
 	w.toleratedBy = least.name
-	w.tolerated = w.lineBy(rule, "F_lim", "highest preload that bolt and parts tolerate", least.force, "N", guideline+"R7 to R11")
+	w.tolerated = w.lineBy(rule, "F_lim", "highest preload that bolt and parts tolerate", least.force, "N",
+		guideline+"R7 to R11")
 }
 
 // threadFriction returns the coefficient in the thread that goes with the

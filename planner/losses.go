@@ -61,7 +61,8 @@ func (w *work) heat() {
 		excess/(w.boltCompliance+w.clampedCompliance), "N/K", guideline+"R4")
 	low, high := perDegree*(t.Service.Low-t.Assembly), perDegree*(t.Service.High-t.Assembly)
 	w.thermalLoss = w.line("dF_Vth", "preload lost by temperature", math.Max(0, math.Max(low, high)), "N", guideline+"R4")
-	w.thermalGain = w.line("dF_gain", "preload gained by temperature", math.Max(0, math.Max(-low, -high)), "N", guideline+"R4")
+	w.thermalGain = w.line("dF_gain", "preload gained by temperature", math.Max(0, math.Max(-low, -high)), "N",
+		guideline+"R4")
 }
 
 // requirement sums up the preload that assembly must give at least, F_Mreq,

@@ -8,8 +8,9 @@ import (
 	"clampback/planner/stiffness"
 )
 
-// Plan is what Work makes of a joint, and its record in JSON. It is a plain value; keys of its JSON form carry their unit. Torques are N.m here,
-// N.mm inside the calculation.
+// Plan is what Work makes of a joint, and its record in JSON. It is a plain value;
+// the keys of the JSON form carry their unit. Torques are N.m here, N.mm inside the
+// calculation.
 type Plan struct {
 	ID            string        `json:"id"`
 	Name          string        `json:"name"`

@@ -81,7 +81,8 @@ func TestCompression(t *testing.T) {
 	assert.Zero(t, p.WorkBack.LoadRelief)
 	taken := p.WorkBack.EmbeddingLoss + p.Stiffness.LoadFactor*20000
 	assert.InEpsilon(t, taken, line(t, p, "F_taken"), 1e-12)
-	assert.InEpsilon(t, p.Preload.Highest-p.WorkBack.EmbeddingLoss+(1-p.Stiffness.LoadFactor)*20000, p.ResidualClamp.Highest, 1e-12)
+	assert.InEpsilon(t, p.Preload.Highest-p.WorkBack.EmbeddingLoss+(1-p.Stiffness.LoadFactor)*20000,
+		p.ResidualClamp.Highest, 1e-12)
 }
 
 // Only a loss by temperature raises the requirement; a gain raises the highest
@@ -135,7 +136,8 @@ func TestNoSilentDefault(t *testing.T) {
 	j.Roughness, j.Bolt.Shank = 0, nil
 	p := work(t, j)
 	all := fmt.Sprint(p.Assumptions)
-	for _, word := range []string{"method", "aim", "utilisation", "resolution", "snug", "compliances", "roughness", "temperature", "cycles", "shank", "lubrication", "head", "nut"} {
+	for _, word := range []string{"method", "aim", "utilisation", "resolution", "snug", "compliances", "roughness",
+		"temperature", "cycles", "shank", "lubrication", "head", "nut"} {
 		assert.Contains(t, all, word)
 	}
 	stated := len(work(t, flange(t)).Assumptions)
@@ -150,7 +152,8 @@ func ExampleWork() {
 		return
 	}
 	b := p.WorkBack
-	fmt.Printf("needed %.0f N = %.0f + %.0f + %.0f N\n", b.RequiredPreload, b.RequiredResidualClamp, b.LoadRelief, b.EmbeddingLoss)
+	fmt.Printf("needed %.0f N = %.0f + %.0f + %.0f N\n", b.RequiredPreload, b.RequiredResidualClamp, b.LoadRelief,
+		b.EmbeddingLoss)
 	fmt.Printf("tighten to %g N.m\n", p.Torque.Target)
 	// Output:
 	// needed 24348 N = 12000 + 8391 + 3957 N

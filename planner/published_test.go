@@ -41,7 +41,8 @@ func TestPreloadTorqueTablesVDI2230(t *testing.T) {
 		case off <= 3*half:
 			near++
 		case !strings.Contains(row["id"], "CV0182"):
-			t.Errorf("%s: %s %s %s mu %s: printed %g, computed %.4g", row["id"], row["thread"], row["class"], column, row["mu"], printed, got)
+			t.Errorf("%s: %s %s %s mu %s: printed %g, computed %.4g", row["id"], row["thread"], row["class"], column,
+				row["mu"], printed, got)
 		}
 	}
 	for _, row := range published.Rows(t, "preload_torque_tables.csv") {
@@ -75,12 +76,14 @@ func TestStainlessGuideValues(t *testing.T) {
 		preload := yieldPreload(th, mu, 0.9, number(t, row, "Rp_MPa"))
 		if row["preload_kN"] != "" {
 			printed, half := published.Number(t, row, "preload_kN")
-			assert.InDelta(t, printed, preload/1000, math.Max(half, 0.025*printed), "%s %s class %s mu %g", row["id"], row["thread"], row["class"], mu)
+			assert.InDelta(t, printed, preload/1000, math.Max(half, 0.025*printed), "%s %s class %s mu %g", row["id"],
+				row["thread"], row["class"], mu)
 		}
 		if row["torque_Nm"] != "" {
 			printed, half := published.Number(t, row, "torque_Nm")
 			got := torqueAt(preload, th, mu, head.BearingDiameter, hole)
-			assert.InDelta(t, printed, got, math.Max(half, 0.04*printed), "%s %s class %s mu %g", row["id"], row["thread"], row["class"], mu)
+			assert.InDelta(t, printed, got, math.Max(half, 0.04*printed), "%s %s class %s mu %g", row["id"],
+				row["thread"], row["class"], mu)
 		}
 	}
 }
@@ -91,7 +94,8 @@ func TestEmbeddingTable5(t *testing.T) {
 	rows := published.Rows(t, "embedding.csv")
 	printed := func(load string, rz float64, place string) float64 {
 		for _, row := range rows {
-			if row["load"] == load && number(t, row, "Rz_from_um") <= rz && rz < number(t, row, "Rz_to_um") && row["place"] == place {
+			if row["load"] == load && number(t, row, "Rz_from_um") <= rz && rz < number(t, row,
+				"Rz_to_um") && row["place"] == place {
 				return number(t, row, "f_Z_um")
 			}
 		}
@@ -130,7 +134,8 @@ func TestEnduranceLimit(t *testing.T) {
 	j := flange(t)
 	j.Loads.Cycles = 2.5e5
 	p := work(t, j)
-	assert.InEpsilon(t, 2*line(t, p, "sigma_ASV"), line(t, p, "sigma_lim"), 1e-12, "an eighth of the cycles doubles the limit")
+	assert.InEpsilon(t, 2*line(t, p, "sigma_ASV"), line(t, p, "sigma_lim"), 1e-12,
+		"an eighth of the cycles doubles the limit")
 }
 
 // Bearing area and pressure at F_M,Tab under hexagon heads: a catalogue table

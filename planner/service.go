@@ -35,7 +35,8 @@ func (w *work) atMost(name string, value, limit float64, unit, source string) *C
 	if limit > 0 {
 		utilisation = value / limit
 	}
-	return w.add(Check{Name: name, Rule: name, Value: value, Limit: limit, Unit: unit, Utilisation: utilisation, Source: source})
+	return w.add(Check{Name: name, Rule: name, Value: value, Limit: limit, Unit: unit, Utilisation: utilisation,
+		Source: source})
 }
 
 // atLeast adds a check of a value that must reach its limit.
@@ -44,7 +45,8 @@ func (w *work) atLeast(name string, value, limit float64, unit, source string) *
 	if value > 0 {
 		utilisation = limit / value
 	}
-	return w.add(Check{Name: name, Rule: name, Value: value, Limit: limit, Unit: unit, Utilisation: utilisation, Source: source, AtLeast: true})
+	return w.add(Check{Name: name, Rule: name, Value: value, Limit: limit, Unit: unit, Utilisation: utilisation,
+		Source: source, AtLeast: true})
 }
 
 // maxUtilisation stands for a check that fails without measure, so that the
@@ -122,8 +124,10 @@ func (w *work) checkFatigue() {
 // and in service.
 func (w *work) checkBearing() {
 	for i, f := range w.faces {
-		assembly := w.lineAt(i+1, "p_M", "bearing pressure under the "+f.name+" at assembly", w.highest/f.area(), "MPa", guideline+"R10")
-		service := w.lineAt(i+1, "p_B", "bearing pressure under the "+f.name+" in service", w.largest/f.area(), "MPa", guideline+"R10")
+		assembly := w.lineAt(i+1, "p_M", "bearing pressure under the "+f.name+" at assembly", w.highest/f.area(),
+			"MPa", guideline+"R10")
+		service := w.lineAt(i+1, "p_B", "bearing pressure under the "+f.name+" in service", w.largest/f.area(), "MPa",
+			guideline+"R10")
 		c := w.atMost("bearing pressure under the "+f.name+", assembly", assembly, f.pressure, "MPa", guideline+"R10")
 		c.Rule, c.Index = "bearing assembly", i+1
 		c = w.atMost("bearing pressure under the "+f.name+", service", service, f.pressure, "MPa", guideline+"R10")
@@ -135,7 +139,8 @@ func (w *work) checkBearing() {
 // in a tapped part, that the bolt breaks before the thread strips.
 func (w *work) checkThread() {
 	if w.joint.Nut != nil {
-		w.atLeast("thread engagement", w.joint.Engagement(), w.joint.Nut.Height, "mm", "ISO 898-2: the nut's full height").Rule = "nut engagement"
+		w.atLeast("thread engagement", w.joint.Engagement(), w.joint.Nut.Height, "mm",
+			"ISO 898-2: the nut's full height").Rule = "nut engagement"
 		return
 	}
 	w.atLeast("thread engagement", w.joint.Engagement(), w.engagementNeeded, "mm", guideline+"R11").Rule = "tapped engagement"

@@ -69,7 +69,8 @@ func (w *work) engagementSpring() float64 {
 		w.input("c_M", "equivalent length of the tapped thread over d", stiffness.TappedThreadLength, "-", guideline+"5.1.1")
 		w.input("E_M", "modulus of the tapped part", j.Tapped.Material.Modulus, "MPa", j.Tapped.Material.Source)
 		return w.line("delta_M", "compliance of the tapped thread",
-			stiffness.Rod(stiffness.TappedThreadLength*t.diameter, t.nominalArea, j.Tapped.Material.Modulus), "mm/N", guideline+"5.1.1")
+			stiffness.Rod(stiffness.TappedThreadLength*t.diameter, t.nominalArea,
+				j.Tapped.Material.Modulus), "mm/N", guideline+"5.1.1")
 	}
 	w.input("c_M", "equivalent length of the nut over d", stiffness.NutThreadLength, "-", guideline+"5.1.1")
 	w.input("E_M", "modulus of the nut, as the bolt's", j.Bolt.Class.Modulus, "MPa", j.Bolt.Class.Source)
@@ -102,7 +103,8 @@ func (w *work) clampedSpring() {
 		if !cones.Tapped {
 			w.lineAt(i+1, "c_N", "nut cone in "+l.name+", length over area", piece.FarCone, "1/mm", guideline+"5.1.2")
 		}
-		sum += w.lineByAt("delta_P_i."+joint, i+1, "delta_P", "compliance of "+l.name, piece.Sum()/l.modulus, "mm/N", guideline+"5.1.2")
+		sum += w.lineByAt("delta_P_i."+joint, i+1, "delta_P", "compliance of "+l.name, piece.Sum()/l.modulus, "mm/N",
+			guideline+"5.1.2")
 		depth = end
 	}
 	w.clampedCompliance = w.line("delta_P", "compliance of the clamped parts", sum, "mm/N", guideline+"5.1.2")

@@ -95,7 +95,8 @@ func (w *work) stripping() {
 	ratio := w.line("R_S", "strength ratio of tapped to bolt thread",
 		tapped.ShearStrength*tappedArea/(boltStrength*boltArea), "-", guideline+"R11")
 	boltFactor := w.line("C_2", "bending factor of the bolt thread", boltBending(ratio), "-", guideline+"R11, from memory")
-	tappedFactor := w.line("C_3", "bending factor of the tapped thread", tappedBending(ratio), "-", guideline+"R11, from memory")
+	tappedFactor := w.line("C_3", "bending factor of the tapped thread", tappedBending(ratio), "-",
+		guideline+"R11, from memory")
 
 	perLength := w.line("q_strip", "stripping force over length of engagement",
 		math.Min(tappedFactor*tapped.ShearStrength*tappedArea, boltFactor*boltStrength*boltArea), "N/mm", guideline+"R11")

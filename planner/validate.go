@@ -54,7 +54,8 @@ func (j Joint) Faults() []Fault {
 	v.friction(j.Friction)
 	v.tightening(j.Tightening)
 	v.require(j.Roughness >= 0 && j.Roughness < MaxRoughness, "surfaces",
-		fmt.Sprintf("Rz %g um lies outside the embedding table, which ends at 160 um", j.Roughness*1000), "state Rz below 160 um")
+		fmt.Sprintf("Rz %g um lies outside the embedding table, which ends at 160 um",
+			j.Roughness*1000), "state Rz below 160 um")
 	return v.faults
 }
 
@@ -124,7 +125,8 @@ func (v *validator) ends(j Joint) {
 		"neither nut nor tapped is stated") {
 		return
 	}
-	if !v.require(j.Nut == nil || j.Tapped == nil, "tapped", "keep one of them", "both nut and tapped are stated") || j.Tapped == nil {
+	if !v.require(j.Nut == nil || j.Tapped == nil, "tapped", "keep one of them",
+		"both nut and tapped are stated") || j.Tapped == nil {
 		return
 	}
 	v.require(j.NutWasher == nil, "washers.nut", "remove it", "a nut washer is stated, but there is no nut")

@@ -51,7 +51,8 @@ func (w *work) failures() []string {
 		all = append(all, fmt.Sprintf("%s: %s %s %s %s %s", c.Name, plain(c.Value), c.Unit, verb, plain(c.Limit), c.Unit))
 	}
 	if w.joint.Tightening.Method == TorqueMethod && w.snug >= w.torque {
-		all = append(all, fmt.Sprintf("snug torque: %.4g N.m is not below the target torque %.4g N.m", w.snug/1000, w.torque/1000))
+		all = append(all, fmt.Sprintf("snug torque: %.4g N.m is not below the target torque %.4g N.m", w.snug/1000,
+			w.torque/1000))
 	}
 	return all
 }

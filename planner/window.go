@@ -24,7 +24,8 @@ func (w *work) torqueWindow() {
 		w.window = w.rangeWindow()
 	}
 	w.window.target = settingIn(w.window, math.Sqrt(w.window.low*w.window.high), t.Step, t.Aim)
-	w.lineBy("T_A."+string(t.Aim), "T_A", "target torque, 0 when there is none", w.window.target/1000, "N.m", "largest or middle setting in the window")
+	w.lineBy("T_A."+string(t.Aim), "T_A", "target torque, 0 when there is none", w.window.target/1000, "N.m",
+		"largest or middle setting in the window")
 
 	torque := w.window.target
 	if torque == 0 {
@@ -37,8 +38,10 @@ func (w *work) torqueWindow() {
 	w.torque = torque
 	w.torques = Torque{WindowLow: w.window.low / 1000, Target: w.window.target / 1000, WindowHigh: w.window.high / 1000}
 	if t.Scatter == GuideScatter {
-		w.highest = w.lineBy("F_Mmax.guide", "F_Mmax", "highest preload that the setting gives", torque/w.friction.least, "N", guideline+"R6, R13")
-		w.lowest = w.lineBy("F_Mmin.guide", "F_Mmin", "lowest preload that the setting gives", w.highest/w.scatterFactor, "N", guideline+"R6")
+		w.highest = w.lineBy("F_Mmax.guide", "F_Mmax", "highest preload that the setting gives",
+			torque/w.friction.least, "N", guideline+"R6, R13")
+		w.lowest = w.lineBy("F_Mmin.guide", "F_Mmin", "lowest preload that the setting gives",
+			w.highest/w.scatterFactor, "N", guideline+"R6")
 		return
 	}
 	tolerance := t.Tool.Tolerance

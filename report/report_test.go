@@ -13,24 +13,11 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"clampback/planner"
-	"clampback/planner/register"
 	"clampback/report"
+	"clampback/report/internal/demo"
 )
 
 var update = flag.Bool("update", false, "write the golden files anew")
-
-func demoPlans(t testing.TB) []planner.Plan {
-	data, err := os.ReadFile("../testdata/demo/tarn40.yaml")
-	require.NoError(t, err)
-	joints, err := register.Read(register.Source{Name: "tarn40.yaml", Data: data})
-	require.NoError(t, err)
-	plans := make([]planner.Plan, len(joints))
-	for i, j := range joints {
-		plans[i], err = planner.Work(j)
-		require.NoError(t, err)
-	}
-	return plans
-}
 
 // each gives the plans one by one, as the program does.
 func each(plans []planner.Plan) iter.Seq2[planner.Plan, error] {
@@ -46,7 +33,7 @@ func each(plans []planner.Plan) iter.Seq2[planner.Plan, error] {
 // The text of the demo plant as it was last read and approved.
 func TestTextGolden(t *testing.T) {
 	for name, o := range map[string]report.TextOptions{"plan.golden": {}, "trace.golden": {Trace: true}} {
-		plans := demoPlans(t)
+		plans := demo.Plans(t)
 		if o.Trace {
 			plans = plans[:1]
 		}
@@ -65,8 +52,8 @@ func TestTextGolden(t *testing.T) {
 // Colour repeats the words and adds nothing else.
 func TestColourOnlyMarks(t *testing.T) {
 	var plain, coloured bytes.Buffer
-	require.NoError(t, report.WriteText(&plain, each(demoPlans(t)), report.TextOptions{}))
-	require.NoError(t, report.WriteText(&coloured, each(demoPlans(t)), report.TextOptions{Colour: true}))
+	require.NoError(t, report.WriteText(&plain, each(demo.Plans(t)), report.TextOptions{}))
+	require.NoError(t, report.WriteText(&coloured, each(demo.Plans(t)), report.TextOptions{Colour: true}))
 	text := coloured.Bytes()
 	for _, code := range []string{"\x1b[32m", "\x1b[1;31m", "\x1b[0m"} {
 		assert.Contains(t, string(text), code)
@@ -78,15 +65,17 @@ func TestColourOnlyMarks(t *testing.T) {
 // The record has exactly the keys of the design, and numbers where it has them.
 func TestRecordKeys(t *testing.T) {
 	var b bytes.Buffer
-	require.NoError(t, report.WriteJSON(&b, "Tarn 40 slurry pump", "C", each(demoPlans(t))))
+	require.NoError(t, report.WriteJSON(&b, "Tarn 40 slurry pump", "C", each(demo.Plans(t))))
 	var record map[string]any
 	require.NoError(t, json.Unmarshal(b.Bytes(), &record))
 	assert.ElementsMatch(t, []string{"assembly", "revision", "joints"}, keys(record))
 	joint := record["joints"].([]any)[0].(map[string]any)
-	assert.ElementsMatch(t, []string{"id", "name", "count", "feasible", "binds", "stiffness", "work_back", "preload", "torque", "angle", "residual_clamp", "checks", "trace", "assumptions"}, keys(joint))
+	assert.ElementsMatch(t, []string{"id", "name", "count", "feasible", "binds", "stiffness", "work_back", "preload",
+		"torque", "angle", "residual_clamp", "checks", "trace", "assumptions"}, keys(joint))
 	for object, want := range map[string][]string{
-		"stiffness":      {"bolt_compliance_mm_per_N", "clamped_compliance_mm_per_N", "load_factor"},
-		"work_back":      {"required_residual_clamp_N", "load_relief_N", "embedding_loss_N", "thermal_loss_N", "required_preload_N"},
+		"stiffness": {"bolt_compliance_mm_per_N", "clamped_compliance_mm_per_N", "load_factor"},
+		"work_back": {"required_residual_clamp_N", "load_relief_N", "embedding_loss_N", "thermal_loss_N",
+			"required_preload_N"},
 		"preload":        {"limit_N", "lowest_N", "highest_N", "scatter_factor"},
 		"torque":         {"window_low_Nm", "target_Nm", "window_high_Nm"},
 		"angle":          {"snug_torque_Nm", "from_snug_deg", "low_deg", "high_deg"},
@@ -97,8 +86,10 @@ func TestRecordKeys(t *testing.T) {
 			assert.IsType(t, 1.0, value, key)
 		}
 	}
-	assert.ElementsMatch(t, []string{"name", "value", "limit", "unit", "utilisation", "ok", "source"}, keys(joint["checks"].([]any)[0].(map[string]any)))
-	assert.ElementsMatch(t, []string{"symbol", "meaning", "value", "unit", "source"}, keys(joint["trace"].([]any)[0].(map[string]any)))
+	assert.ElementsMatch(t, []string{"name", "value", "limit", "unit", "utilisation", "ok", "source"},
+		keys(joint["checks"].([]any)[0].(map[string]any)))
+	assert.ElementsMatch(t, []string{"symbol", "meaning", "value", "unit", "source"},
+		keys(joint["trace"].([]any)[0].(map[string]any)))
 }
 
 func keys(m map[string]any) []string {
@@ -111,8 +102,8 @@ func keys(m map[string]any) []string {
 
 // A writer that fails is reported.
 func TestFailedWriterIsReported(t *testing.T) {
-	assert.Error(t, report.WriteText(broken{}, each(demoPlans(t)), report.TextOptions{}))
-	assert.Error(t, report.WriteJSON(broken{}, "", "", each(demoPlans(t))))
+	assert.Error(t, report.WriteText(broken{}, each(demo.Plans(t)), report.TextOptions{}))
+	assert.Error(t, report.WriteJSON(broken{}, "", "", each(demo.Plans(t))))
 }
 
 type broken struct{}

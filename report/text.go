@@ -171,7 +171,8 @@ func (t *text) checks(p planner.Plan) {
 		if c.AtLeast {
 			relation = ">="
 		}
-		t.printf("    %-50s %8s %s %8s %-4s %5.0f %%  %s\n", c.Name, Plain(c.Value), relation, Plain(c.Limit), c.Unit, 100*c.Utilisation, verdict)
+		t.printf("    %-50s %8s %s %8s %-4s %5.0f %%  %s\n", c.Name, Plain(c.Value), relation, Plain(c.Limit), c.Unit,
+			100*c.Utilisation, verdict)
 	}
 }
 
@@ -190,7 +191,8 @@ func (t *text) trace(p planner.Plan) {
 }
 
 func (t *text) summary(feasible, all int) {
-	t.printf("\n%d joints: %d feasible, %d infeasible. Calculated, not tested on these joints.\n", all, feasible, all-feasible)
+	t.printf("\n%d joints: %d feasible, %d infeasible. Calculated, not tested on these joints.\n", all, feasible,
+		all-feasible)
 	t.printf("Local codes and the judgement of a licensed engineer come first.\n")
 }
 

@@ -50,7 +50,8 @@ what is not OK and what to do then. An infeasible joint gets no card.`,
 	c.Flags().StringVar(&f.together, "together", "", "one PDF for all joints, with bookmarks")
 	c.Flags().StringVar(&f.paper, "paper", "A5", "A4, A5 or letter")
 	c.Flags().BoolVar(&f.withDiagram, "with-diagram", false, "add a calculation page with the joint diagram")
-	c.Flags().BoolVar(&f.showInfeasible, "show-infeasible", false, "write a page that forbids tightening for an infeasible joint")
+	c.Flags().BoolVar(&f.showInfeasible, "show-infeasible", false,
+		"write a page that forbids tightening for an infeasible joint")
 	return c
 }
 
@@ -95,7 +96,8 @@ func writeSeparate(c *cobra.Command, plans []planner.Plan, dir string, options c
 	for _, p := range plans {
 		name := strings.ToLower(p.ID)
 		if other, ok := taken[name]; ok {
-			return mendable("give one of them another id", "joints %s and %s differ only in case and would share a file", other, p.ID)
+			return mendable("give one of them another id",
+				"joints %s and %s differ only in case and would share a file", other, p.ID)
 		}
 		taken[name] = p.ID
 	}

@@ -46,5 +46,6 @@ func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
 	for i, d := range sizes {
 		names[i] = nominal(d)
 	}
-	return none, fmt.Errorf("no %s %q of size %s: the table has %s", c.what, kind, nominal(t.Diameter), strings.Join(names, ", "))
+	return none, fmt.Errorf("no %s %q of size %s: the table has %s", c.what, kind, nominal(t.Diameter),
+		strings.Join(names, ", "))
 }

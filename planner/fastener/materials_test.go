@@ -99,7 +99,8 @@ func TestMatchingNutOutlastsBolt(t *testing.T) {
 		require.NoError(t, err)
 		load, _ := published.Number(t, row, "load_N")
 		area, _ := published.Number(t, row, "area_mm2")
-		assert.GreaterOrEqual(t, load+halfThirdFigure(load), area*class.TensileStrength, "printed to three or four figures: %v", row)
+		assert.GreaterOrEqual(t, load+halfThirdFigure(load), area*class.TensileStrength,
+			"printed to three or four figures: %v", row)
 		checked++
 	}
 	assert.Greater(t, checked, 20)
@@ -210,7 +211,8 @@ func TestMaterialsAreInTheirFamily(t *testing.T) {
 		expansion [2]float64 // 1e-6/K
 		shear     [2]float64 // of R_m
 	}{
-		{[]string{"S235", "S355", "E295", "C45", "Cq45", "34Cr", "42Cr", "30Cr", "38Mn", "16Mn"}, [2]float64{200, 212}, [2]float64{11, 12.5}, [2]float64{0.55, 0.65}},
+		{[]string{"S235", "S355", "E295", "C45", "Cq45", "34Cr", "42Cr", "30Cr", "38Mn", "16Mn"},
+			[2]float64{200, 212}, [2]float64{11, 12.5}, [2]float64{0.55, 0.65}},
 		{[]string{"1.4", "X5"}, [2]float64{190, 205}, [2]float64{15.5, 17.5}, [2]float64{0.7, 0.85}},
 		{[]string{"EN-GJL"}, [2]float64{78, 143}, [2]float64{9, 13}, [2]float64{1.1, 1.2}},
 		{[]string{"EN-GJS"}, [2]float64{165, 180}, [2]float64{11, 13}, [2]float64{0.85, 0.95}},

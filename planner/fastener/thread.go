@@ -37,7 +37,8 @@ func ParseThread(designation string) (Thread, error) {
 	}
 	diameter, _, _ := strings.Cut(name, "x")
 	if pitches, found := series.pitches[diameter]; found {
-		return Thread{}, fmt.Errorf("thread %s has no pitch %q: ISO 261 has %s", diameter, strings.TrimSpace(pitch), strings.Join(pitches, ", "))
+		return Thread{}, fmt.Errorf("thread %s has no pitch %q: ISO 261 has %s", diameter, strings.TrimSpace(pitch),
+			strings.Join(pitches, ", "))
 	}
 	return Thread{}, &UnknownError{Kind: "thread", Name: designation, Known: series.names}
 }

@@ -98,7 +98,8 @@ func TestParseThreadSpellings(t *testing.T) {
 }
 
 func TestParseThreadRefuses(t *testing.T) {
-	for _, bad := range []string{"", "M", "m12", "12", "M11", "M12.0", "M012", "1/2-13 UNC", "M 12", "M1e1", "x", "Mx1", "M2", "M65", "M\x00"} {
+	for _, bad := range []string{"", "M", "m12", "12", "M11", "M12.0", "M012", "1/2-13 UNC", "M 12", "M1e1", "x",
+		"Mx1", "M2", "M65", "M\x00"} {
 		_, err := ParseThread(bad)
 		var unknown *UnknownError
 		require.ErrorAs(t, err, &unknown, "%q", bad)
@@ -121,7 +122,8 @@ func TestParseThreadRefuses(t *testing.T) {
 // Whatever is written, a thread that comes back is one of the table and reads
 // back to itself, with the order of diameters of ISO 68-1.
 func FuzzParseThread(f *testing.F) {
-	for _, seed := range []string{"M12", "M12x1.25", "M12 × 1.25", "M12x1.75", "M64X4", "M12x", "x", "M", "1/2-13 UNC", "M\xff", "M12x1,25"} {
+	for _, seed := range []string{"M12", "M12x1.25", "M12 × 1.25", "M12x1.75", "M64X4", "M12x", "x", "M",
+		"1/2-13 UNC", "M\xff", "M12x1,25"} {
 		f.Add(seed)
 	}
 	f.Fuzz(func(t *testing.T, designation string) {

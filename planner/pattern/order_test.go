@@ -52,7 +52,8 @@ func TestOrderIsAPermutation(t *testing.T) {
 			n := rapid.IntRange(1, 30).Draw(t, "n")
 			points := make([]pattern.Point, n)
 			for i := range points {
-				points[i] = pattern.Point{X: rapid.Float64Range(-500, 500).Draw(t, "x"), Y: rapid.Float64Range(-500, 500).Draw(t, "y")}
+				points[i] = pattern.Point{X: rapid.Float64Range(-500, 500).Draw(t, "x"),
+					Y: rapid.Float64Range(-500, 500).Draw(t, "y")}
 			}
 			p = pattern.NewFree(points)
 		}

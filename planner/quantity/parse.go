@@ -57,7 +57,8 @@ func ParseRange(text string, d Dimension) (Range, error) {
 		return Range{}, err
 	}
 	if low > high {
-		return Range{}, &Error{fmt.Sprintf("%q runs backwards", text), "write the lower end first, for example \"" + strings.TrimSpace(highText) + " to ...\""}
+		return Range{}, &Error{fmt.Sprintf("%q runs backwards", text),
+			"write the lower end first, for example \"" + strings.TrimSpace(highText) + " to ...\""}
 	}
 	return Range{Low: low, High: high}, nil
 }
@@ -125,7 +126,8 @@ func resolve(name, text string, d Dimension) (unit, error) {
 		return unit{}, &Error{fmt.Sprintf("unknown unit %q", name), fmt.Sprintf("use %s", unitsOf(d))}
 	}
 	if u.dimension != d {
-		return unit{}, &Error{fmt.Sprintf("%q is a %s, but a %s belongs here", text, u.dimension, d), fmt.Sprintf("write it as %s", d.Example())}
+		return unit{}, &Error{fmt.Sprintf("%q is a %s, but a %s belongs here", text, u.dimension, d),
+			fmt.Sprintf("write it as %s", d.Example())}
 	}
 	return u, nil
 }

@@ -129,7 +129,8 @@ func TestTrimReadsBack(t *testing.T) {
 }
 
 func FuzzParseRange(f *testing.F) {
-	for _, s := range []string{"12.5 kN", "0 to 9.5 kN", "-5 kN to 3 N", "1e3 mm", "to", " to ", "e e", "+-1 N", "12 µm", "1 to 2 to 3 N"} {
+	for _, s := range []string{"12.5 kN", "0 to 9.5 kN", "-5 kN to 3 N", "1e3 mm", "to", " to ", "e e", "+-1 N",
+		"12 µm", "1 to 2 to 3 N"} {
 		f.Add(s, int(quantity.Force))
 	}
 	f.Fuzz(func(t *testing.T, s string, d int) {

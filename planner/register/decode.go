@@ -29,7 +29,8 @@ func (d *decoder) object(n *node, name string, known ...string) *object {
 		return &object{d, &node{}, name}
 	}
 	if n.kind != mapping {
-		d.at(n.pos, fmt.Sprintf("%s is %s, but a mapping belongs here", name, n.kind), fmt.Sprintf("write it as {%s: ...}", known[0]))
+		d.at(n.pos, fmt.Sprintf("%s is %s, but a mapping belongs here", name, n.kind),
+			fmt.Sprintf("write it as {%s: ...}", known[0]))
 		return &object{d, &node{pos: n.pos}, name}
 	}
 	for _, e := range n.entries {

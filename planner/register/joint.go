@@ -67,7 +67,8 @@ func (d *decoder) bolt(parent *object) planner.Bolt {
 	}
 	o := d.object(parent.node.get("bolt"), "bolt", "thread", "length", "head", "property_class", "shank", "segments")
 	if inchThread.MatchString(o.textIfScalar("thread")) {
-		d.at(o.node.get("thread").pos, "inch threads are not planned by this version", "state an ISO metric thread, for example M12")
+		d.at(o.node.get("thread").pos, "inch threads are not planned by this version",
+			"state an ISO metric thread, for example M12")
 		return b
 	}
 	b.Thread = find(o, "thread", "M12", fastener.ParseThread)
@@ -75,7 +76,8 @@ func (d *decoder) bolt(parent *object) planner.Bolt {
 		b.Length = o.one("length", quantity.Length)
 	}
 	if o.textIfScalar("head") == "stud" {
-		d.at(o.node.get("head").pos, "studs are not planned by this version", "state a bolt with head: hexagon, hexagon flange or socket cap")
+		d.at(o.node.get("head").pos, "studs are not planned by this version",
+			"state a bolt with head: hexagon, hexagon flange or socket cap")
 	} else if b.Thread.Diameter > 0 {
 		b.Head = find(o, "head", "hexagon", func(s string) (fastener.Head, error) { return fastener.FindHead(s, b.Thread) })
 		b.Class = find(o, "property_class", `"10.9"`, func(s string) (fastener.PropertyClass, error) { return fastener.FindClass(s, b.Thread) })
@@ -87,7 +89,8 @@ func (d *decoder) bolt(parent *object) planner.Bolt {
 	for i, n := range d.list(o.node.get("segments"), "segments") {
 		s := d.object(n, fmt.Sprintf("segment %d", i+1), "length", "diameter")
 		if s.require("length", "20 mm") && s.require("diameter", "10 mm") {
-			b.Segments = append(b.Segments, planner.Segment{Length: s.one("length", quantity.Length), Diameter: s.one("diameter", quantity.Length)})
+			b.Segments = append(b.Segments, planner.Segment{Length: s.one("length", quantity.Length),
+				Diameter: s.one("diameter", quantity.Length)})
 		}
 	}
 	return b
@@ -107,7 +110,8 @@ func (d *decoder) list(n *node, name string) []*node {
 		return nil
 	}
 	if n.kind != list {
-		d.at(n.pos, fmt.Sprintf("%s is %s, but a list belongs here", name, n.kind), "write it as [..., ...], or one item a line that begins with \"- \"")
+		d.at(n.pos, fmt.Sprintf("%s is %s, but a list belongs here", name, n.kind),
+			"write it as [..., ...], or one item a line that begins with \"- \"")
 		return nil
 	}
 	return n.items
@@ -228,7 +232,8 @@ func (d *decoder) temperature(n *node) *planner.Temperature {
 	if !o.require("assembly", "20 degC") || !o.require("service", "90 degC") {
 		return nil
 	}
-	return &planner.Temperature{Assembly: o.one("assembly", quantity.Temperature), Service: o.span("service", quantity.Temperature)}
+	return &planner.Temperature{Assembly: o.one("assembly", quantity.Temperature),
+		Service: o.span("service", quantity.Temperature)}
 }
 
 func (d *decoder) friction(n *node) planner.Friction {
@@ -246,7 +251,8 @@ func (d *decoder) friction(n *node) planner.Friction {
 		return planner.Friction{Thread: c.Thread, Head: c.Head, State: state, Source: c.Name + ", " + c.Source}
 	default:
 		if o.require("thread", "0.10 to 0.14") && o.require("head", "0.09 to 0.13") {
-			return planner.Friction{Thread: o.span("thread", quantity.Ratio), Head: o.span("head", quantity.Ratio), State: state, Source: "stated in the register"}
+			return planner.Friction{Thread: o.span("thread", quantity.Ratio), Head: o.span("head", quantity.Ratio),
+				State: state, Source: "stated in the register"}
 		}
 	}
 	return planner.Friction{}
@@ -289,7 +295,8 @@ func (d *decoder) pattern(n *node, count int) pattern.Pattern {
 	rows, columns := o.whole("rows"), o.whole("columns")
 	pitch := d.pair(o.node.get("pitch"), "pitch")
 	if rows < 1 || columns < 1 || rows > planner.MaxCount/columns {
-		d.at(o.node.get("rows").pos, fmt.Sprintf("a pattern of %d rows and %d columns is impossible", rows, columns), "state how many rows and columns of bolts there are")
+		d.at(o.node.get("rows").pos, fmt.Sprintf("a pattern of %d rows and %d columns is impossible", rows, columns),
+			"state how many rows and columns of bolts there are")
 		return pattern.Pattern{}
 	}
 	return pattern.NewGrid(rows, columns, pitch.X, pitch.Y)
@@ -316,7 +323,8 @@ func (d *decoder) tightening(n *node) planner.Tightening {
 	o := d.object(n, "tightening", "method", "scatter", "scatter_factor", "tool", "utilisation", "aim", "step", "snug",
 		"snug_torque", "angle_step", "angle_tolerance", "elastic_spread")
 	t := planner.Tightening{
-		Method:        planner.Method(o.planned("method", []string{"torque", "torque and angle"}, []string{"yield", "tension", "stretch"})),
+		Method: planner.Method(o.planned("method", []string{"torque", "torque and angle"},
+			[]string{"yield", "tension", "stretch"})),
 		Scatter:       planner.Scatter(o.planned("scatter", []string{"range", "guide"}, []string{"chance"})),
 		ScatterFactor: o.one("scatter_factor", quantity.Number),
 		Utilisation:   o.one("utilisation", quantity.Ratio),
@@ -343,7 +351,8 @@ func (o *object) planned(key string, planned, later []string) string {
 	text := o.textIfScalar(key)
 	for _, word := range later {
 		if text == word {
-			o.d.at(o.node.get(key).pos, fmt.Sprintf("%s: %q is not planned by this version", key, text), "state "+strings.Join(planned, " or "))
+			o.d.at(o.node.get(key).pos, fmt.Sprintf("%s: %q is not planned by this version", key, text),
+				"state "+strings.Join(planned, " or "))
 			return ""
 		}
 	}

@@ -66,7 +66,8 @@ type ProblemsError struct{ Problems []Problem }
 // Error summarises the problems in one line.
 func (e *ProblemsError) Error() string {
 	first := e.Problems[0]
-	return fmt.Sprintf("%s:%d:%d: %s (%d problems in all)", first.File, first.Line, first.Column, first.Message, len(e.Problems))
+	return fmt.Sprintf("%s:%d:%d: %s (%d problems in all)", first.File, first.Line, first.Column, first.Message,
+		len(e.Problems))
 }
 
 // Report prints the problems for a person: the first 50 in full, then how many

@@ -59,7 +59,8 @@ func readSource(in Source) ([]located, []Problem) {
 	headChunk, chunks := split(s)
 	p := &problems{source: s}
 	if len(chunks) > maxJoints {
-		p.at(position{chunks[maxJoints].first, 1}, fmt.Sprintf("the register has more than %d joints", maxJoints), "split it into several files")
+		p.at(position{chunks[maxJoints].first, 1}, fmt.Sprintf("the register has more than %d joints", maxJoints),
+			"split it into several files")
 		return nil, p.all
 	}
 	top := parse(p, headChunk)
@@ -133,7 +134,8 @@ func readChunk(s *source, h header, c chunk) jointResult {
 func readJoint(s *source, h header, own *node, whole bool) jointResult {
 	d := &decoder{&problems{source: s}}
 	if own.kind != mapping {
-		d.at(own.pos, fmt.Sprintf("a joint is %s, but a mapping belongs here", own.kind), "write it as - id: A-010, with its other keys below")
+		d.at(own.pos, fmt.Sprintf("a joint is %s, but a mapping belongs here", own.kind),
+			"write it as - id: A-010, with its other keys below")
 		return jointResult{problems: d.all}
 	}
 	n := merge(h.defaults, own)

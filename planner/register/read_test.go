@@ -148,7 +148,8 @@ func TestGuardsRefuseCleanly(t *testing.T) {
 		"alias bomb":       {"a: &a [x]\nb: &b [*a,*a]\nassembly: *b\n", "anchors are not used"},
 		"empty":            {"", "the register is empty"},
 		"one huge part":    {"assembly: x\n" + strings.Repeat("a: b\n", 500_000), "more than one joint can need"},
-		"one huge joint":   {"assembly: x\njoints:\n  - points: [" + strings.Repeat("1, ", 500_000) + "]\n", "more than one joint can need"},
+		"one huge joint": {"assembly: x\njoints:\n  - points: [" + strings.Repeat("1, ", 500_000) + "]\n",
+			"more than one joint can need"},
 		"countless joints": {"assembly: x\njoints:\n" + strings.Repeat("- a\n", 200_000), "more than 100000 joints"},
 		"only a scalar":    {"hello", "the register is a single value"},
 	}
@@ -168,7 +169,8 @@ func TestGuardsRefuseCleanly(t *testing.T) {
 // inherits it.
 func TestAllProblemsInOneRun(t *testing.T) {
 	second := strings.Replace("  - id"+after(good, "  - id"), "A-1", "A-2", 1)
-	text := strings.Replace(good, "tolerance: 4 %", "tolerance: 4 mm", 1) + strings.Replace(second, "nut: hexagon", "nut: square", 1)
+	text := strings.Replace(good, "tolerance: 4 %", "tolerance: 4 mm", 1) + strings.Replace(second, "nut: hexagon",
+		"nut: square", 1)
 	text = strings.Replace(text, "residual: 12 kN", "residual: 12", 1)
 	_, err := read(text)
 	var e *register.ProblemsError
@@ -181,7 +183,8 @@ func TestAllProblemsInOneRun(t *testing.T) {
 }
 
 func TestDuplicateIDsAcrossFiles(t *testing.T) {
-	_, err := register.Read(register.Source{Name: "a.yaml", Data: []byte(good)}, register.Source{Name: "b.yaml", Data: []byte(good)})
+	_, err := register.Read(register.Source{Name: "a.yaml", Data: []byte(good)},
+		register.Source{Name: "b.yaml", Data: []byte(good)})
 	assert.ErrorContains(t, err, "b.yaml:7:9: the id A-1 stands here and in a.yaml:7")
 }
 
@@ -250,7 +253,8 @@ func BenchmarkRead10000(b *testing.B) {
 func FuzzRead(f *testing.F) {
 	f.Add([]byte(good))
 	f.Add([]byte(demo(f)))
-	for _, s := range []string{"", "a: [", "joints:\n- ", "joints:\n  - id: 1\n  - ? a", "assembly: x\njoints: [a, {b: c}]", "? [a]\n: b", "a: |\n  x\n", "--- >\n", "joints: {}\n", "<<: {a: b}\n"} {
+	for _, s := range []string{"", "a: [", "joints:\n- ", "joints:\n  - id: 1\n  - ? a",
+		"assembly: x\njoints: [a, {b: c}]", "? [a]\n: b", "a: |\n  x\n", "--- >\n", "joints: {}\n", "<<: {a: b}\n"} {
 		f.Add([]byte(s))
 	}
 	f.Fuzz(func(t *testing.T, data []byte) {

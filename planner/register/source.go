@@ -39,7 +39,8 @@ func ReadSource(r io.Reader, name string) (Source, error) {
 	}
 	if len(data) > MaxSize {
 		return Source{}, &ProblemsError{[]Problem{{
-			File: name, Message: fmt.Sprintf("the file is larger than %d MB", MaxSize>>20), Mend: "split the register into several files",
+			File: name, Message: fmt.Sprintf("the file is larger than %d MB",
+				MaxSize>>20), Mend: "split the register into several files",
 		}}}
 	}
 	return Source{Name: name, Data: data}, nil
@@ -100,7 +101,8 @@ func guardLine(p *problems, number int, line string) bool {
 		p.at(position{number, indent + 1}, "a tab indents the line", "indent with blanks")
 		return false
 	}
-	if indent > maxIndent || strings.HasPrefix(line[indent:], strings.Repeat("- ", maxDepth)) || strings.HasPrefix(line[indent:], strings.Repeat("? ", maxDepth)) {
+	if indent > maxIndent || strings.HasPrefix(line[indent:],
+		strings.Repeat("- ", maxDepth)) || strings.HasPrefix(line[indent:], strings.Repeat("? ", maxDepth)) {
 		p.at(position{number, indent + 1}, "the line nests too deeply", "a register needs no more than five levels")
 		return false
 	}

@@ -56,12 +56,14 @@ func (n *node) get(key string) *node {
 func parse(p *problems, c chunk) *node {
 	text := strings.Join(c.lines, "\n")
 	if len(text) > maxPart {
-		p.at(position{c.first, 1}, fmt.Sprintf("this part of the register has %d kB, more than one joint can need", len(text)>>10),
+		p.at(position{c.first, 1}, fmt.Sprintf("this part of the register has %d kB, more than one joint can need",
+			len(text)>>10),
 			"begin each joint with \"- \" on a line of its own under joints:")
 		return nil
 	}
 	if pos, deep := nesting(c.lines); deep {
-		p.at(position{pos.line + c.first - 1, pos.column}, "the brackets nest too deeply", "a register needs no more than five levels")
+		p.at(position{pos.line + c.first - 1, pos.column}, "the brackets nest too deeply",
+			"a register needs no more than five levels")
 		return nil
 	}
 	file, err := parseYAML(text)
@@ -103,10 +105,12 @@ type treeBuilder struct {
 func (t *treeBuilder) syntax(err error) {
 	var s *yaml.SyntaxError
 	if errors.As(err, &s) && s.GetToken() != nil {
-		t.problem(s.GetToken(), "this is not YAML: "+s.GetMessage(), "check indentation, colons, quotes and brackets here and in the line above")
+		t.problem(s.GetToken(), "this is not YAML: "+s.GetMessage(),
+			"check indentation, colons, quotes and brackets here and in the line above")
 		return
 	}
-	t.p.at(position{t.offset + 1, 1}, "this is not YAML: "+err.Error(), "check indentation, colons, quotes and brackets from here on")
+	t.p.at(position{t.offset + 1, 1}, "this is not YAML: "+err.Error(),
+		"check indentation, colons, quotes and brackets from here on")
 }
 
 func (t *treeBuilder) problem(tk *token.Token, message, mend string) {

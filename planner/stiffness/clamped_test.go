@@ -29,9 +29,11 @@ func TestMemberStiffnessTextbook(t *testing.T) {
 		{"CV2021 example 8-2", 0.75, 0.5, []slab{{0.095, 30}, {0.5, 30}, {0.75, 14.5}}, 9.378, 0.0006},
 		{"CV2022 example 8-2, all steel", 0.75, 0.5, []slab{{1.345, 30}}, 14.64, 0.005},
 		{"CV2030 example 8-4", 0.9375, 0.625, []slab{{1.5, 14}}, 8.95, 0.005},
-		{"CV2041 example 8-5", 0.9375, 0.625, []slab{{0.6875, 30}, {0.3125, 16}}, 17.40, 0.006}, // the book rounds tan 30 deg to 0.577
+		{"CV2041 example 8-5", 0.9375, 0.625, []slab{{0.6875, 30}, {0.3125, 16}}, 17.40,
+			0.006}, // the book rounds tan 30 deg to 0.577
 		{"CV2054 problem 8-24", 0.75, 0.5, []slab{{0.5, 30}, {0.625, 14.5}, {0.095, 30}}, 10.79, 0.005},
-		{"CV2055 problem 8-25", 0.75, 0.5, []slab{{0.595, 30}, {0.25, 14.5}}, 12.87, 0.07}, // the solution starts the middle frustum at 1.018 in, not at 1.039 in
+		{"CV2055 problem 8-25", 0.75, 0.5, []slab{{0.595, 30}, {0.25, 14.5}}, 12.87,
+			0.07}, // the solution starts the middle frustum at 1.018 in, not at 1.039 in
 	}
 	for _, c := range cases {
 		t.Run(c.id, func(t *testing.T) {

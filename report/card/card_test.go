@@ -20,26 +20,13 @@ import (
 	"clampback/planner"
 	"clampback/planner/pattern"
 	"clampback/planner/quantity"
-	"clampback/planner/register"
 	"clampback/report/card"
+	"clampback/report/internal/demo"
 	"clampback/templates"
 )
 
-func demoPlans(t testing.TB) []planner.Plan {
-	data, err := os.ReadFile("../../testdata/demo/tarn40.yaml")
-	require.NoError(t, err)
-	joints, err := register.Read(register.Source{Name: "tarn40.yaml", Data: data})
-	require.NoError(t, err)
-	plans := make([]planner.Plan, len(joints))
-	for i, j := range joints {
-		plans[i], err = planner.Work(j)
-		require.NoError(t, err)
-	}
-	return plans
-}
-
 func byID(t testing.TB, id string) planner.Plan {
-	for _, p := range demoPlans(t) {
+	for _, p := range demo.Plans(t) {
 		if p.ID == id {
 			return p
 		}
@@ -82,7 +69,7 @@ func squeeze(s string) string { return strings.Join(strings.Fields(s), " ") }
 // Every demo card holds its plan's setting, bolts and limits, as an independent
 // reader of PDF finds them.
 func TestCardTextIsThePlans(t *testing.T) {
-	for _, p := range demoPlans(t) {
+	for _, p := range demo.Plans(t) {
 		if !p.Feasible {
 			continue
 		}
@@ -105,7 +92,8 @@ func TestCardTextIsThePlans(t *testing.T) {
 				assert.Contains(t, front, "Set the tool to "+quantity.Trim(p.Torque.Target))
 				assert.Contains(t, whole, "Set "+quantity.Trim(p.Torque.Target)+" N.m.")
 			}
-			for _, text := range []string{"Warnings", "OK or not OK", "Do not add torque.", "Calculated, not tested", "revision C", "Local codes", "Tightened by"} {
+			for _, text := range []string{"Warnings", "OK or not OK", "Do not add torque.", "Calculated, not tested",
+				"revision C", "Local codes", "Tightened by"} {
 				assert.Contains(t, whole, text)
 			}
 			for i := range all {
@@ -125,7 +113,7 @@ func TestLimitsOfReadingsLieInsideThePlan(t *testing.T) {
 		require.NoError(t, err)
 		return low, high
 	}
-	for _, p := range demoPlans(t) {
+	for _, p := range demo.Plans(t) {
 		if !p.Feasible {
 			continue
 		}
@@ -166,7 +154,7 @@ func TestInfeasibleJointGetsNoInstruction(t *testing.T) {
 func TestPDFIsValid(t *testing.T) {
 	qpdf := need(t, "qpdf", "qpdf")
 	var b bytes.Buffer
-	require.NoError(t, card.WriteTogether(&b, demoPlans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
+	require.NoError(t, card.WriteTogether(&b, demo.Plans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
 	name := filepath.Join(t.TempDir(), "cards.pdf")
 	require.NoError(t, os.WriteFile(name, b.Bytes(), 0o600))
 	output, err := exec.Command(qpdf, "--check", name).CombinedOutput()
@@ -176,8 +164,8 @@ func TestPDFIsValid(t *testing.T) {
 func TestSameBytesForSamePlan(t *testing.T) {
 	for range 3 {
 		var a, b bytes.Buffer
-		require.NoError(t, card.WriteTogether(&a, demoPlans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
-		require.NoError(t, card.WriteTogether(&b, demoPlans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
+		require.NoError(t, card.WriteTogether(&a, demo.Plans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
+		require.NoError(t, card.WriteTogether(&b, demo.Plans(t), card.Options{WithDiagram: true, ShowInfeasible: true}))
 		assert.True(t, bytes.Equal(a.Bytes(), b.Bytes()))
 	}
 }
@@ -218,7 +206,8 @@ func TestSettingIsLarge(t *testing.T) {
 // than 8 mm in a strip of 14 mm, mm: no text is but the settings.
 func inkHeights(t *testing.T, pdf []byte, left int) []float64 {
 	const scale = 5 // pixels a mm
-	command := exec.Command(need(t, "pdftoppm", "poppler-utils"), "-png", "-gray", "-r", fmt.Sprint(25.4*scale), "-f", "1", "-l", "1", "-")
+	command := exec.Command(need(t, "pdftoppm", "poppler-utils"), "-png", "-gray", "-r", fmt.Sprint(25.4*scale), "-f",
+		"1", "-l", "1", "-")
 	command.Stdin = bytes.NewReader(pdf)
 	png, err := command.Output()
 	require.NoError(t, err)
@@ -284,10 +273,12 @@ func assertClean(t *testing.T, name string, pdf []byte, width, height float64) {
 	const edge = 7 / 0.3528 // 7 mm in points
 	for n, page := range words(t, pdf) {
 		for i, a := range page {
-			require.True(t, a.left >= edge && a.top >= edge && a.right <= width-edge && a.bottom <= height-edge, "%s, page %d: %v is cut", name, n+1, a)
+			require.True(t, a.left >= edge && a.top >= edge && a.right <= width-edge && a.bottom <= height-edge,
+				"%s, page %d: %v is cut", name, n+1, a)
 			for _, b := range page[:i] {
 				const touch = 0.3 // points: rounding of the boxes
-				require.False(t, a.left+touch < b.right && b.left+touch < a.right && a.top+touch < b.bottom && b.top+touch < a.bottom,
+				require.False(t,
+					a.left+touch < b.right && b.left+touch < a.right && a.top+touch < b.bottom && b.top+touch < a.bottom,
 					"%s, page %d: %v runs into %v", name, n+1, a, b)
 			}
 		}
@@ -296,9 +287,11 @@ func assertClean(t *testing.T, name string, pdf []byte, width, height float64) {
 
 // Nothing is cut or printed over other text: all demo joints on all papers.
 func TestNothingIsCutOrOverprinted(t *testing.T) {
-	for paper, size := range map[card.Paper][2]float64{card.A5: {419.5, 595.3}, card.A4: {595.3, 841.9}, card.Letter: {612, 792}} {
+	for paper, size := range map[card.Paper][2]float64{card.A5: {419.5, 595.3}, card.A4: {595.3, 841.9},
+		card.Letter: {612, 792}} {
 		var b bytes.Buffer
-		require.NoError(t, card.WriteTogether(&b, demoPlans(t), card.Options{Paper: paper, WithDiagram: true, ShowInfeasible: true}))
+		require.NoError(t, card.WriteTogether(&b, demo.Plans(t),
+			card.Options{Paper: paper, WithDiagram: true, ShowInfeasible: true}))
 		assertClean(t, fmt.Sprint(paper), b.Bytes(), size[0], size[1])
 	}
 }
@@ -367,7 +360,8 @@ func TestMissingPhraseIsAnError(t *testing.T) {
 		if strings.Contains(from, "{torque}") {
 			spoiled = strings.Replace(string(words), from, "Set the tool.", 1)
 		}
-		err := card.Write(io.Discard, byID(t, "TRN-010"), card.Options{Templates: fstest.MapFS{"cards/en.csv": {Data: []byte(spoiled)}}})
+		err := card.Write(io.Discard, byID(t, "TRN-010"),
+			card.Options{Templates: fstest.MapFS{"cards/en.csv": {Data: []byte(spoiled)}}})
 		assert.ErrorContains(t, err, want)
 	}
 }
@@ -397,19 +391,20 @@ func TestEveryPhraseIsUsed(t *testing.T) {
 func TestForbiddingPageNamesAReason(t *testing.T) {
 	p := byID(t, "TRN-010")
 	p.Feasible, p.Angle.SnugTorque = false, p.Torque.Target
-	assert.Contains(t, squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0]), "The first pass would already reach the final torque.")
+	assert.Contains(t, squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0]),
+		"The first pass would already reach the final torque.")
 	p.Angle.SnugTorque = 0
 	assert.Contains(t, squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0]), "Joint engineering knows why.")
 }
 
 // Target: 1,000 A5 cards in documents of 100 to 500 in under 2 s.
 func BenchmarkCards1000(b *testing.B) {
-	demo := demoPlans(b)
+	plant := demo.Plans(b)
 	var plans []planner.Plan
 	for i := range 250 {
-		p := demo[i%len(demo)]
+		p := plant[i%len(plant)]
 		if !p.Feasible {
-			p = demo[0]
+			p = plant[0]
 		}
 		plans = append(plans, p)
 	}

@@ -61,7 +61,8 @@ func (d *document) hatch(p planner.Plan, s sheet) {
 		d.canvas.Line(x, h, x+h, 0, stroke)
 	}
 	edge := d.mm(3)
-	for _, r := range []figure.Box{{Width: w, Height: edge}, {Y: h - edge, Width: w, Height: edge}, {Width: edge, Height: h}, {X: w - edge, Width: edge, Height: h}} {
+	for _, r := range []figure.Box{{Width: w, Height: edge}, {Y: h - edge, Width: w, Height: edge},
+		{Width: edge, Height: h}, {X: w - edge, Width: edge, Height: h}} {
 		d.rectangle(r.X, r.Y, r.Width, r.Height, 0, figure.Stroke{})
 	}
 	pad := d.mm(1.5)

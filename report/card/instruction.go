@@ -42,7 +42,8 @@ func (d *document) what(p planner.Plan) block {
 	}
 	b := j.Bolt
 	lines := []string{
-		d.words.say("bolt_line", "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head", b.Head.Kind, "standard", b.Head.Standard, "class", b.Class.Name) + ". " + d.spanner(p),
+		d.words.say("bolt_line", "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head",
+			b.Head.Kind, "standard", b.Head.Standard, "class", b.Class.Name) + ". " + d.spanner(p),
 		d.mating(j),
 		d.washers(j),
 	}

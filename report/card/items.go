@@ -132,5 +132,6 @@ func (d *document) framed(height float64, pen float64, inner func(x, y float64))
 }
 
 func (d *document) rectangle(x, y, width, height, grey float64, s figure.Stroke) {
-	d.canvas.Polygon([]figure.Point{{X: x, Y: y}, {X: x + width, Y: y}, {X: x + width, Y: y + height}, {X: x, Y: y + height}}, grey, s)
+	d.canvas.Polygon([]figure.Point{{X: x, Y: y}, {X: x + width, Y: y}, {X: x + width, Y: y + height},
+		{X: x, Y: y + height}}, grey, s)
 }

@@ -59,10 +59,12 @@ func (d *document) verdict(p planner.Plan) block {
 	var items []item
 	if isAngle(p) {
 		lowTorque, highTorque := inwards(quantity.Range{Low: p.Torque.WindowLow, High: p.Torque.WindowHigh}, 1, 0.1, 0.01)
-		items = append(items, item{"✓", say("accept_end_lead"), say("accept_end", "anglelow", lowAngle, "anglehigh", highAngle, "low", lowTorque, "high", highTorque)})
+		items = append(items, item{"✓", say("accept_end_lead"),
+			say("accept_end", "anglelow", lowAngle, "anglehigh", highAngle, "low", lowTorque, "high", highTorque)})
 	} else {
 		items = append(items,
-			item{"✓", say("accept_angle_lead"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low", lowAngle, "high", highAngle)},
+			item{"✓", say("accept_angle_lead"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low",
+				lowAngle, "high", highAngle)},
 			item{mark: "×", text: say("nok_spin")})
 	}
 	for _, key := range []string{"nok_early", "nok_reading", "nok_parts"} {

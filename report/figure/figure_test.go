@@ -2,7 +2,6 @@ package figure_test
 
 import (
 	"io/fs"
-	"os"
 	"strings"
 	"testing"
 	"unicode/utf8"
@@ -16,24 +15,11 @@ import (
 	"clampback/planner"
 	"clampback/planner/pattern"
 	"clampback/planner/quantity"
-	"clampback/planner/register"
 	"clampback/planner/stiffness"
 	"clampback/report/figure"
+	"clampback/report/internal/demo"
 	"clampback/templates"
 )
-
-func demoPlans(t testing.TB) []planner.Plan {
-	data, err := os.ReadFile("../../testdata/demo/tarn40.yaml")
-	require.NoError(t, err)
-	joints, err := register.Read(register.Source{Name: "tarn40.yaml", Data: data})
-	require.NoError(t, err)
-	plans := make([]planner.Plan, len(joints))
-	for i, j := range joints {
-		plans[i], err = planner.Work(j)
-		require.NoError(t, err)
-	}
-	return plans
-}
 
 // Both faces hold every character that Printable lets through, and every
 // character of the cards' words: an independent reader of the font files says so.
@@ -94,7 +80,8 @@ func TestWidthsAgreeWithThePDFLibrary(t *testing.T) {
 	for _, text := range []string{"98", "Tighten to 165 N.m", "±4 % µ Ω", "Ж", "a漢b"} {
 		for style, bold := range map[string]bool{"": false, "B": true} {
 			doc.SetFont("DejaVu", style, 10/(25.4/72))
-			assert.InDelta(t, doc.GetStringWidth(figure.Printable(text)), pdf.Width(text, figure.Type{Size: 10, Bold: bold}), 0.1, text)
+			assert.InDelta(t, doc.GetStringWidth(figure.Printable(text)),
+				pdf.Width(text, figure.Type{Size: 10, Bold: bold}), 0.1, text)
 		}
 	}
 }
@@ -107,7 +94,7 @@ func spell(key string, pairs ...string) string {
 // The diagram of every demo joint draws without a number that is none, labels
 // what it draws, and is the same every time.
 func TestJointDiagramOfDemo(t *testing.T) {
-	for _, p := range demoPlans(t) {
+	for _, p := range demo.Plans(t) {
 		draw := func() string {
 			c := figure.NewSVG(130, 72)
 			figure.JointDiagram(c, p, figure.Box{Width: 130, Height: 72}, spell)
@@ -116,7 +103,8 @@ func TestJointDiagramOfDemo(t *testing.T) {
 		first := draw()
 		assert.NotContains(t, first, "NaN", p.ID)
 		assert.NotContains(t, first, "Inf", p.ID)
-		for _, text := range []string{"diagram_force", "diagram_length", ">diagram_bolt<", "diagram_limit force", "diagram_required force"} {
+		for _, text := range []string{"diagram_force", "diagram_length", ">diagram_bolt<", "diagram_limit force",
+			"diagram_required force"} {
 			assert.Contains(t, first, text, p.ID)
 		}
 		assert.Equal(t, first, draw())
@@ -127,7 +115,7 @@ func TestJointDiagramOfDemo(t *testing.T) {
 // preload less the losses and the share of the load (the geometry of the joint
 // diagram, VDI 2230-1; 1e-6 N for the rounding of sums).
 func TestTriangleEndsAtTheResidualClamp(t *testing.T) {
-	for _, p := range demoPlans(t) {
+	for _, p := range demo.Plans(t) {
 		d := p.Diagram
 		if d.Axial.High > 0 {
 			assert.InDelta(t, d.ResidualClamp.Low, d.Preload.Low-d.Loss-d.ClampShare, 1e-6, p.ID)
@@ -142,7 +130,7 @@ func TestJointDiagramOfHopelessJoints(t *testing.T) {
 		func(p *planner.Plan) { p.Diagram.Preload = quantity.Range{} },
 		func(p *planner.Plan) { p.Diagram.ResidualClamp.Low = -5000 },
 	} {
-		p := demoPlans(t)[0]
+		p := demo.Plans(t)[0]
 		spoil(&p)
 		c := figure.NewSVG(130, 72)
 		figure.JointDiagram(c, p, figure.Box{Width: 130, Height: 72}, spell)
@@ -154,16 +142,20 @@ func TestJointDiagramOfHopelessJoints(t *testing.T) {
 // The order on the drawing is the pattern's: as many numbers as bolts, all
 // inside the box.
 func TestBoltPatternDrawsEveryBolt(t *testing.T) {
-	for _, p := range []pattern.Pattern{pattern.NewCircle(24, 460), pattern.NewGrid(2, 4, 60, 80), pattern.NewFree([]pattern.Point{{X: 0, Y: 0}}), pattern.NewCircle(1, 50)} {
+	for _, p := range []pattern.Pattern{pattern.NewCircle(24, 460), pattern.NewGrid(2, 4, 60, 80),
+		pattern.NewFree([]pattern.Point{{X: 0, Y: 0}}), pattern.NewCircle(1, 50)} {
 		c := figure.NewSVG(60, 60)
 		digits := figure.BoltPattern(c, p, figure.Box{Width: 60, Height: 60})
 		assert.Positive(t, digits)
 		assert.Equal(t, len(p.Points), strings.Count(c.String(), "<text"))
 		assert.NotContains(t, c.String(), "NaN")
 	}
-	assert.GreaterOrEqual(t, figure.DigitOf(pattern.NewCircle(24, 460), figure.Box{Width: 60, Height: 60}), 2.2, "24 bolts on A5, mm: 15 minutes of arc at 0.5 m, the least of NUREG-0700")
-	assert.Less(t, figure.PatternHeight(pattern.NewGrid(1, 4, 60, 80), figure.Box{Width: 60, Height: 60}), 12.0, "a row needs little height, mm")
-	for _, p := range []pattern.Pattern{pattern.NewGrid(1, 2, 48, 48), pattern.NewGrid(2, 4, 60, 80), pattern.NewGrid(3, 1, 9, 9), pattern.NewCircle(24, 460)} {
+	assert.GreaterOrEqual(t, figure.DigitOf(pattern.NewCircle(24, 460), figure.Box{Width: 60, Height: 60}), 2.2,
+		"24 bolts on A5, mm: 15 minutes of arc at 0.5 m, the least of NUREG-0700")
+	assert.Less(t, figure.PatternHeight(pattern.NewGrid(1, 4, 60, 80), figure.Box{Width: 60, Height: 60}), 12.0,
+		"a row needs little height, mm")
+	for _, p := range []pattern.Pattern{pattern.NewGrid(1, 2, 48, 48), pattern.NewGrid(2, 4, 60, 80),
+		pattern.NewGrid(3, 1, 9, 9), pattern.NewCircle(24, 460)} {
 		box := figure.Box{Width: 60, Height: 60}
 		whole := figure.DigitOf(p, box)
 		box.Height = figure.PatternHeight(p, box)

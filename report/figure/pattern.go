@@ -16,7 +16,8 @@ import (
 func BoltPattern(c Canvas, p pattern.Pattern, box Box) float64 {
 	l := layPattern(p, box)
 	if p.Kind == pattern.Circle {
-		c.Circle(l.place(pattern.Point{}).X, l.place(pattern.Point{}).Y, p.Diameter/2*l.scale, 1, Stroke{Width: 0.2, Grey: 0.6, Dash: []float64{2, 1}})
+		c.Circle(l.place(pattern.Point{}).X, l.place(pattern.Point{}).Y, p.Diameter/2*l.scale, 1,
+			Stroke{Width: 0.2, Grey: 0.6, Dash: []float64{2, 1}})
 	}
 	for position, number := range p.Order() {
 		at := l.place(p.Points[number-1])

@@ -31,7 +31,8 @@ func (s *SVG) Line(x1, y1, x2, y2 float64, k Stroke) {
 	if k.Width <= 0 || !finite(x1, y1, x2, y2) {
 		return
 	}
-	fmt.Fprintf(&s.body, "<line x1=\"%s\" y1=\"%s\" x2=\"%s\" y2=\"%s\"%s/>\n", number(x1), number(y1), number(x2), number(y2), pen(k))
+	fmt.Fprintf(&s.body, "<line x1=\"%s\" y1=\"%s\" x2=\"%s\" y2=\"%s\"%s/>\n", number(x1), number(y1), number(x2),
+		number(y2), pen(k))
 }
 
 // Polygon implements Canvas.
@@ -51,7 +52,8 @@ func (s *SVG) Circle(x, y, radius, grey float64, k Stroke) {
 	if !finite(x, y, radius) {
 		return
 	}
-	fmt.Fprintf(&s.body, "<circle cx=\"%s\" cy=\"%s\" r=\"%s\" fill=\"%s\"%s/>\n", number(x), number(y), number(radius), shade(grey), pen(k))
+	fmt.Fprintf(&s.body, "<circle cx=\"%s\" cy=\"%s\" r=\"%s\" fill=\"%s\"%s/>\n", number(x), number(y),
+		number(radius), shade(grey), pen(k))
 }
 
 // Text implements Canvas.
@@ -67,7 +69,8 @@ func (s *SVG) Text(x, y float64, text string, t Type) {
 	// A strings.Builder never fails.
 	_ = xml.EscapeText(&escaped, []byte(Printable(text)))
 	fmt.Fprintf(&s.body, "<text x=\"%s\" y=\"%s\" font-size=\"%s\" text-anchor=\"%s\" fill=\"%s\"%s>%s</text>\n",
-		number(x), number(y), number(t.Size), [...]string{"start", "middle", "end"}[t.Anchor], shade(t.Grey), weight, escaped.String())
+		number(x), number(y), number(t.Size), [...]string{"start", "middle",
+			"end"}[t.Anchor], shade(t.Grey), weight, escaped.String())
 }
 
 // Width implements Canvas.

@@ -65,7 +65,8 @@ func formula(style int, text string, cached any) excelize.Cell {
 // writeCalculation writes a joint's sheet: verdict, every line of the trace, the
 // checks, the assumptions.
 func (b *book) writeCalculation(c *calculation, index int) error {
-	stream, err := b.openSheet(c.sheet, index, page{landscape: false, titleRows: "$6:$6", joint: c.plan.Joint}, calculationWidths)
+	stream, err := b.openSheet(c.sheet, index, page{landscape: false, titleRows: "$6:$6", joint: c.plan.Joint},
+		calculationWidths)
 	if err != nil {
 		return err
 	}
@@ -82,9 +83,11 @@ func (b *book) writeCalculation(c *calculation, index int) error {
 		{cell(s.title, clean(c.plan.ID+"  "+c.plan.Name))},
 		{cell(0, clean(j.Assembly+", revision "+orNone(j.Revision)+", prepared by "+orNone(j.PreparedBy)))},
 		{cell(0, clean(report.Fasteners(j)))},
-		{cell(s.bold, "Verdict"), nil, formula(s.warning, c.verdictFormula(checksFrom, checksTo), verdictWord(c.plan.Feasible))},
+		{cell(s.bold, "Verdict"), nil, formula(s.warning, c.verdictFormula(checksFrom, checksTo),
+			verdictWord(c.plan.Feasible))},
 		{cell(0, "Framed cells are inputs: change one and every line below follows. "+caution)},
-		{cell(s.heading, "symbol"), cell(s.heading, "meaning"), cell(s.heading, "value"), cell(s.heading, "unit"), cell(s.heading, "source"), cell(s.heading, "kind")},
+		{cell(s.heading, "symbol"), cell(s.heading, "meaning"), cell(s.heading, "value"), cell(s.heading, "unit"),
+			cell(s.heading, "source"), cell(s.heading, "kind")},
 	}
 	for i, row := range rows {
 		lines := 1
@@ -159,7 +162,8 @@ func (b *book) writeTrace(w *writer, c *calculation, index int) error {
 		b.names = append(b.names, definedName{l.Symbol, index, quoted(c.sheet) + "!" + c.cells[l.Symbol]})
 		s := b.styles
 		lines := max(linesOf(l.Meaning, calculationWidths[1]), linesOf(l.Source, calculationWidths[4]))
-		err := w.putLines(lines, cell(s.text, l.Symbol), cell(s.wrapped, clean(l.Meaning)), value, cell(s.text, l.Unit), cell(s.wrapped, clean(l.Source)), cell(s.text, kind))
+		err := w.putLines(lines, cell(s.text, l.Symbol), cell(s.wrapped, clean(l.Meaning)), value,
+			cell(s.text, l.Unit), cell(s.wrapped, clean(l.Source)), cell(s.text, kind))
 		if err != nil {
 			return err
 		}
@@ -216,7 +220,8 @@ func (b *book) checkRow(check planner.Check, value, limit string, row int) []any
 		verdict = "FAILS"
 	}
 	return []any{
-		nil, cell(s.wrapped, check.Name), formula(number, value, check.Value), cell(s.text, check.Unit), formula(number, limit, check.Limit),
+		nil, cell(s.wrapped, check.Name), formula(number, value, check.Value), cell(s.text,
+			check.Unit), formula(number, limit, check.Limit),
 		formula(s.computed["0%"], used, check.Utilisation), cell(s.text, rule),
 		formula(s.bold, fmt.Sprintf(`IF(F%d<=1+1E-9,"ok","FAILS")`, row), verdict),
 	}

@@ -19,28 +19,9 @@ import (
 	"github.com/xuri/excelize/v2"
 
 	"clampback/planner"
-	"clampback/planner/register"
+	"clampback/report/internal/demo"
 	"clampback/report/sheet"
 )
-
-// demoJoints returns the joints of the demo plant.
-func demoJoints(t testing.TB) []planner.Joint {
-	data, err := os.ReadFile("../../testdata/demo/tarn40.yaml")
-	require.NoError(t, err)
-	joints, err := register.Read(register.Source{Name: "tarn40.yaml", Data: data})
-	require.NoError(t, err)
-	return joints
-}
-
-func planAll(t testing.TB, joints []planner.Joint) []planner.Plan {
-	plans := make([]planner.Plan, len(joints))
-	for i, j := range joints {
-		var err error
-		plans[i], err = planner.Work(j)
-		require.NoError(t, err)
-	}
-	return plans
-}
 
 func write(t testing.TB, plans []planner.Plan) []byte {
 	var b bytes.Buffer
@@ -93,7 +74,8 @@ func poison(t testing.TB, book []byte) []byte {
 func recalculate(t testing.TB, books ...[]byte) []*excelize.File {
 	soffice := needSpreadsheet(t)
 	dir := t.TempDir()
-	args := []string{"-env:UserInstallation=file://" + filepath.Join(dir, "profile"), "--headless", "--convert-to", "xlsx:Calc MS Excel 2007 XML", "--outdir", filepath.Join(dir, "out")}
+	args := []string{"-env:UserInstallation=file://" + filepath.Join(dir, "profile"), "--headless", "--convert-to",
+		"xlsx:Calc MS Excel 2007 XML", "--outdir", filepath.Join(dir, "out")}
 	for i, book := range books {
 		name := filepath.Join(dir, fmt.Sprintf("book%d.xlsx", i))
 		require.NoError(t, os.WriteFile(name, poison(t, book), 0o600))
@@ -169,7 +151,7 @@ func compare(t *testing.T, p planner.Plan, f *excelize.File) {
 // The formulas, a second statement of the method, recalculated by LibreOffice,
 // give the plan's numbers on every demo joint.
 func TestFormulasRecalculated(t *testing.T) {
-	plans := planAll(t, demoJoints(t))
+	plans := demo.Plans(t)
 	f := recalculate(t, write(t, plans))[0]
 	cells := 0
 	for _, p := range plans {
@@ -204,7 +186,7 @@ type change struct {
 // An auditor changes an input in the workbook and sees the torque move: to where
 // a fresh plan of the changed joint has it.
 func TestChangedInputsMoveTheTorque(t *testing.T) {
-	joints := demoJoints(t)
+	joints := demo.Joints(t)
 	changes := []change{
 		{0, "F_K_res", 20000, func(j *planner.Joint) { j.Clamp.Residual = 20000 }},
 		{0, "h_2", 21, func(j *planner.Joint) { j.Parts[0].Thickness = 21 }},
@@ -226,9 +208,9 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 	var books [][]byte
 	var want []planner.Plan
 	for _, c := range changes {
-		before := planAll(t, joints[c.joint:c.joint+1])
+		before := demo.PlanAll(t, joints[c.joint:c.joint+1])
 		books = append(books, setInput(t, write(t, before), before[0], c.symbol, c.value))
-		changed := demoJoints(t)[c.joint]
+		changed := demo.Joints(t)[c.joint]
 		c.apply(&changed)
 		after, err := planner.Work(changed)
 		require.NoError(t, err)

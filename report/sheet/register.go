@@ -32,14 +32,16 @@ func (b *book) openSheet(name string, index int, p page, widths []float64) (*exc
 	if err != nil {
 		return nil, err
 	}
-	if err := f.SetPageLayout(name, &excelize.PageLayoutOptions{Size: &a4, Orientation: &orientation, FitToWidth: &wide, FitToHeight: &high}); err != nil {
+	if err := f.SetPageLayout(name, &excelize.PageLayoutOptions{Size: &a4, Orientation: &orientation,
+		FitToWidth: &wide, FitToHeight: &high}); err != nil {
 		return nil, err
 	}
 	if err := f.SetSheetProps(name, &excelize.SheetPropsOptions{FitToPage: &fit}); err != nil {
 		return nil, err
 	}
 	title := strings.ReplaceAll(clean(p.joint.Assembly+", revision "+orNone(p.joint.Revision)), "&", "&&")
-	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + cut(title, 100) + "&R&A", OddFooter: "&LCalculated, not tested&RPage &P of &N"}); err != nil {
+	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + cut(title, 100) + "&R&A",
+		OddFooter: "&LCalculated, not tested&RPage &P of &N"}); err != nil {
 		return nil, err
 	}
 	stream, err := f.NewStreamWriter(name)
@@ -132,11 +134,13 @@ func (b *book) writeRegister(calculations []calculation) error {
 	if err := b.filterRegister(len(calculations)); err != nil {
 		return err
 	}
-	stream, err := b.openSheet(registerSheet, 0, page{landscape: true, titleRows: fmt.Sprintf("$%d:$%d", registerHeading, registerHeading), joint: first}, widths)
+	stream, err := b.openSheet(registerSheet, 0, page{landscape: true,
+		titleRows: fmt.Sprintf("$%d:$%d", registerHeading, registerHeading), joint: first}, widths)
 	if err != nil {
 		return err
 	}
-	panes := &excelize.Panes{Freeze: true, XSplit: 1, YSplit: registerHeading, TopLeftCell: fmt.Sprintf("B%d", registerHeading+1), ActivePane: "bottomRight"}
+	panes := &excelize.Panes{Freeze: true, XSplit: 1, YSplit: registerHeading,
+		TopLeftCell: fmt.Sprintf("B%d", registerHeading+1), ActivePane: "bottomRight"}
 	if err := stream.SetPanes(panes); err != nil {
 		return err
 	}

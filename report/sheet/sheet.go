@@ -88,7 +88,8 @@ func (b *book) properties() error {
 		return err
 	}
 	const date = "2026-01-01T00:00:00Z" // a fixed one: the book depends on the plans alone
-	return b.file.SetDocProps(&excelize.DocProperties{Created: date, Modified: date, Creator: "clampback", LastModifiedBy: "clampback", Title: "Joint calculation"})
+	return b.file.SetDocProps(&excelize.DocProperties{Created: date, Modified: date, Creator: "clampback",
+		LastModifiedBy: "clampback", Title: "Joint calculation"})
 }
 
 // defineNames adds all names at once: the library's own call compares each new

@@ -14,6 +14,7 @@ import (
 	"github.com/xuri/excelize/v2"
 
 	"clampback/planner"
+	"clampback/report/internal/demo"
 	"clampback/report/sheet"
 )
 
@@ -26,24 +27,24 @@ func open(t testing.TB, book []byte) *excelize.File {
 
 // many returns n plans of the demo joints under ids of their own.
 func many(t testing.TB, n int) []planner.Plan {
-	demo := planAll(t, demoJoints(t))
+	plant := demo.Plans(t)
 	plans := make([]planner.Plan, n)
 	for i := range plans {
-		plans[i] = demo[i%len(demo)]
+		plans[i] = plant[i%len(plant)]
 		plans[i].ID = fmt.Sprintf("J-%04d", i)
 	}
 	return plans
 }
 
 func TestSameBytesForSamePlans(t *testing.T) {
-	first := write(t, planAll(t, demoJoints(t)))
+	first := write(t, demo.Plans(t))
 	for range 3 {
-		assert.True(t, bytes.Equal(first, write(t, planAll(t, demoJoints(t)))))
+		assert.True(t, bytes.Equal(first, write(t, demo.Plans(t))))
 	}
 }
 
 func TestBookHasRegisterJointsAndAbout(t *testing.T) {
-	plans := planAll(t, demoJoints(t))
+	plans := demo.Plans(t)
 	f := open(t, write(t, plans))
 	want := []string{"Register"}
 	for _, p := range plans {
@@ -63,7 +64,7 @@ func TestBookHasRegisterJointsAndAbout(t *testing.T) {
 // An infeasible joint says so in words at the top of its sheet and in the
 // register.
 func TestInfeasibleJointSaysSo(t *testing.T) {
-	f := open(t, write(t, planAll(t, demoJoints(t))))
+	f := open(t, write(t, demo.Plans(t)))
 	verdict, err := f.GetCellValue("TRN-100", "C4")
 	require.NoError(t, err)
 	assert.Equal(t, "INFEASIBLE: do not tighten", verdict)
@@ -72,10 +73,10 @@ func TestInfeasibleJointSaysSo(t *testing.T) {
 // What a user writes never becomes a formula, whatever it begins with.
 func TestUserTextStaysText(t *testing.T) {
 	for _, text := range []string{`=1+1`, `+1`, `-1`, `@SUM(A1)`, `=HYPERLINK("http://x","y")`, "\t=1", "a\x01b", `{=1}`} {
-		joints := demoJoints(t)[:1]
+		joints := demo.Joints(t)[:1]
 		joints[0].Name, joints[0].Assembly, joints[0].Parts[0].Name = text, text, text
 		joints[0].Tightening.Tool.Name = text
-		f := open(t, write(t, planAll(t, joints)))
+		f := open(t, write(t, demo.PlanAll(t, joints)))
 		for _, name := range f.GetSheetList() {
 			rows, err := f.GetRows(name)
 			require.NoError(t, err)

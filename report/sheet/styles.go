@@ -48,11 +48,13 @@ func newStyles(f *excelize.File) (styles, error) {
 	const family = "Calibri"
 	number := &excelize.Alignment{Vertical: "top", Horizontal: "right", Indent: 1}
 	plain := map[*int]*excelize.Style{
-		&s.title:   {Font: &excelize.Font{Family: family, Bold: true, Size: 14}},
-		&s.heading: {Font: &excelize.Font{Family: family, Bold: true, Size: 11}, Fill: excelize.Fill{Type: "pattern", Pattern: 1, Color: []string{"D9D9D9"}}, Alignment: top},
+		&s.title: {Font: &excelize.Font{Family: family, Bold: true, Size: 14}},
+		&s.heading: {Font: &excelize.Font{Family: family, Bold: true, Size: 11},
+			Fill: excelize.Fill{Type: "pattern", Pattern: 1, Color: []string{"D9D9D9"}}, Alignment: top},
 		&s.text:    {Border: hairline, Alignment: &excelize.Alignment{Vertical: "top"}},
 		&s.wrapped: {Border: hairline, Alignment: top},
-		&s.bold:    {Font: &excelize.Font{Family: family, Bold: true, Size: 11}, Alignment: &excelize.Alignment{Vertical: "top"}},
+		&s.bold: {Font: &excelize.Font{Family: family, Bold: true, Size: 11},
+			Alignment: &excelize.Alignment{Vertical: "top"}},
 		&s.warning: {Font: &excelize.Font{Family: family, Bold: true, Size: 14}},
 	}
 	// The order of creation numbers the styles: it must not follow the map.
