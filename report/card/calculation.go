@@ -66,8 +66,7 @@ func (d *document) settingLines(p planner.Plan) []string {
 	var lines []string
 	if isAngle(p) {
 		lines = append(lines, say("calc_window_angle", "low", fmt.Sprintf("%.1f", quantity.RoundUp(p.AngleWindow.Low, 0.1)),
-			"high", fmt.Sprintf("%.1f", quantity.RoundDown(p.AngleWindow.High,
-				0.1)), "snug", quantity.Trim(p.Angle.SnugTorque)))
+			"high", fmt.Sprintf("%.1f", quantity.RoundDown(p.AngleWindow.High, 0.1)), "snug", quantity.Trim(p.Angle.SnugTorque)))
 	} else {
 		lines = append(lines, say("calc_window", "low", fmt.Sprintf("%.1f", quantity.RoundUp(p.Torque.WindowLow, 0.1)),
 			"high", fmt.Sprintf("%.1f", quantity.RoundDown(p.Torque.WindowHigh, 0.1))))
@@ -77,13 +76,13 @@ func (d *document) settingLines(p planner.Plan) []string {
 	}
 	f, s := p.Joint.Friction, p.Stiffness
 	return append(lines,
-		say("calc_preload", "low", kilo(quantity.RoundDown(p.Preload.Lowest, 10)), "high",
-			kilo(quantity.RoundUp(p.Preload.Highest, 10)),
+		say("calc_preload", "low", kilo(quantity.RoundDown(p.Preload.Lowest, 10)),
+			"high", kilo(quantity.RoundUp(p.Preload.Highest, 10)),
 			"factor", fmt.Sprintf("%.2f", p.Preload.ScatterFactor)),
-		say("calc_left", "low", kilo(quantity.RoundDown(p.ResidualClamp.Lowest, 10)), "high",
-			kilo(quantity.RoundUp(p.ResidualClamp.Highest, 10))),
-		say("calc_stiffness", "bolt", fmt.Sprintf("%.4g", s.BoltCompliance*1e6), "parts",
-			fmt.Sprintf("%.4g", s.ClampedCompliance*1e6), "factor", fmt.Sprintf("%.4f", s.LoadFactor)),
+		say("calc_left", "low", kilo(quantity.RoundDown(p.ResidualClamp.Lowest, 10)),
+			"high", kilo(quantity.RoundUp(p.ResidualClamp.Highest, 10))),
+		say("calc_stiffness", "bolt", fmt.Sprintf("%.4g", s.BoltCompliance*1e6),
+			"parts", fmt.Sprintf("%.4g", s.ClampedCompliance*1e6), "factor", fmt.Sprintf("%.4f", s.LoadFactor)),
 		say("calc_friction", "thread", d.span(f.Thread), "head", d.span(f.Head), "source", f.Source),
 	)
 }
@@ -121,9 +120,8 @@ func (d *document) checkTable(p planner.Plan) []block {
 		if c.AtLeast {
 			relation = "≥ "
 		}
-		blocks = append(blocks,
-			d.checkRow([...]string{c.Name, report.Plain(c.Value), relation + report.Plain(c.Limit), c.Unit,
-				fmt.Sprintf("%.0f %%", c.Utilisation*100), verdict}, face))
+		blocks = append(blocks, d.checkRow([...]string{c.Name, report.Plain(c.Value), relation + report.Plain(c.Limit),
+			c.Unit, fmt.Sprintf("%.0f %%", c.Utilisation*100), verdict}, face))
 	}
 	blocks[len(blocks)-1].tight = false
 	return blocks

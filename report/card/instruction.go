@@ -42,8 +42,8 @@ func (d *document) what(p planner.Plan) block {
 	}
 	b := j.Bolt
 	lines := []string{
-		d.words.say("bolt_line", "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head",
-			b.Head.Kind, "standard", b.Head.Standard, "class", b.Class.Name) + ". " + d.spanner(p),
+		d.words.say("bolt_line", "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head", b.Head.Kind,
+			"standard", b.Head.Standard, "class", b.Class.Name) + ". " + d.spanner(p),
 		d.mating(j),
 		d.washers(j),
 	}
@@ -167,7 +167,8 @@ func (d *document) toolAndLubrication(p planner.Plan) []block {
 	}
 	blocks := d.flow("", []item{{lead: say("tool"), text: tool}, {lead: say("lubrication"), text: state}}, d.body())
 	blocks[len(blocks)-1].tight = true
-	return append(blocks, d.paragraph(say("friction_assumed", "thread", d.span(f.Thread), "head", d.span(f.Head)), d.small()))
+	return append(blocks, d.paragraph(say("friction_assumed", "thread", d.span(f.Thread), "head", d.span(f.Head)),
+		d.small()))
 }
 
 // The drawing of the order takes so much of the page, and its digits must be so

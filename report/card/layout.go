@@ -229,7 +229,8 @@ func (d *document) fit(text string, width float64, t figure.Type) figure.Type {
 // paragraph is a block of wrapped text.
 func (d *document) paragraph(text string, t figure.Type) block {
 	lines := d.wrap(text, d.wide(), t)
-	return block{height: float64(len(lines)) * t.Size * lineHeight, draw: func(y float64) { d.lines(lines, d.left(), y, t) }}
+	return block{height: float64(len(lines)) * t.Size * lineHeight,
+		draw: func(y float64) { d.lines(lines, d.left(), y, t) }}
 }
 
 // lines prints lines of text below y.

@@ -63,8 +63,8 @@ func (d *document) verdict(p planner.Plan) block {
 			say("accept_end", "anglelow", lowAngle, "anglehigh", highAngle, "low", lowTorque, "high", highTorque)})
 	} else {
 		items = append(items,
-			item{"✓", say("accept_angle_lead"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque), "low",
-				lowAngle, "high", highAngle)},
+			item{"✓", say("accept_angle_lead"), say("accept_angle", "snug", quantity.Trim(p.Angle.SnugTorque),
+				"low", lowAngle, "high", highAngle)},
 			item{mark: "×", text: say("nok_spin")})
 	}
 	for _, key := range []string{"nok_early", "nok_reading", "nok_parts"} {

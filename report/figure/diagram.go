@@ -110,7 +110,8 @@ func (g *diagram) axes() {
 		g.c.Text(p.X, p.Y+1.4+g.size, fmt.Sprintf("%g", l), Type{Size: g.size, Anchor: Middle})
 	}
 	g.c.Text(g.plot.X-1.5, g.plot.Y-1.5, g.say("diagram_force"), Type{Size: g.size, Anchor: Start})
-	g.c.Text(g.plot.X+g.plot.Width, g.plot.Y+g.plot.Height+3*g.size, g.say("diagram_length"), Type{Size: g.size, Anchor: End})
+	g.c.Text(g.plot.X+g.plot.Width, g.plot.Y+g.plot.Height+3*g.size, g.say("diagram_length"),
+		Type{Size: g.size, Anchor: End})
 }
 
 // roundSteps returns multiples of a round step up to top, about n of them; none
@@ -192,19 +193,19 @@ func (g *diagram) load() {
 		g.arrow(x, low, low+g.d.BoltShare)
 		left := math.Max(0, g.d.ResidualClamp.Low) // a gaping interface holds nothing
 		g.arrow(x, low, left)
-		g.note(x, low+g.d.BoltShare, g.say("diagram_bolt_load", "force", kilo(low+g.d.BoltShare, true), "share",
-			kilo(g.d.BoltShare, true)))
-		g.note(x, left, g.say("diagram_clamp_load", "force", kilo(g.d.ResidualClamp.Low, false), "share",
-			kilo(g.d.ClampShare, true)))
+		g.note(x, low+g.d.BoltShare, g.say("diagram_bolt_load", "force", kilo(low+g.d.BoltShare, true),
+			"share", kilo(g.d.BoltShare, true)))
+		g.note(x, left, g.say("diagram_clamp_load", "force", kilo(g.d.ResidualClamp.Low, false),
+			"share", kilo(g.d.ClampShare, true)))
 	}
 	if g.d.Axial.Low < 0 {
 		compression := -g.d.Axial.Low
 		g.arrow(x, low, low+(1-g.d.LoadFactor)*compression)
 		g.arrow(x, low, low-g.d.LoadFactor*compression)
-		g.note(x, low+(1-g.d.LoadFactor)*compression, g.say("diagram_clamp_compression", "force",
-			kilo(low+(1-g.d.LoadFactor)*compression, true)))
-		g.note(x, low-g.d.LoadFactor*compression, g.say("diagram_bolt_compression", "force",
-			kilo(low-g.d.LoadFactor*compression, false)))
+		g.note(x, low+(1-g.d.LoadFactor)*compression,
+			g.say("diagram_clamp_compression", "force", kilo(low+(1-g.d.LoadFactor)*compression, true)))
+		g.note(x, low-g.d.LoadFactor*compression, g.say("diagram_bolt_compression",
+			"force", kilo(low-g.d.LoadFactor*compression, false)))
 	}
 }
 

@@ -80,8 +80,8 @@ func TestWidthsAgreeWithThePDFLibrary(t *testing.T) {
 	for _, text := range []string{"98", "Tighten to 165 N.m", "±4 % µ Ω", "Ж", "a漢b"} {
 		for style, bold := range map[string]bool{"": false, "B": true} {
 			doc.SetFont("DejaVu", style, 10/(25.4/72))
-			assert.InDelta(t, doc.GetStringWidth(figure.Printable(text)),
-				pdf.Width(text, figure.Type{Size: 10, Bold: bold}), 0.1, text)
+			assert.InDelta(t, doc.GetStringWidth(figure.Printable(text)), pdf.Width(text, figure.Type{Size: 10, Bold: bold}),
+				0.1, text)
 		}
 	}
 }
