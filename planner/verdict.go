@@ -3,6 +3,8 @@ package planner
 import (
 	"fmt"
 	"math"
+
+	"clampback/planner/quantity"
 )
 
 // feasible reports whether a setting was found and every check passes.
@@ -28,12 +30,23 @@ func (w *work) emptyWindow() string {
 	if t.Method == TorqueAndAngleMethod {
 		unit, scale, step = "deg", 1, t.AngleStep
 	}
-	low, high := w.window.low/scale, w.window.high/scale
-	if low <= high {
+	low, high := inwards(w.window.low/scale, w.window.high/scale)
+	if w.window.low <= w.window.high {
 		return fmt.Sprintf("no multiple of %.4g %s lies in the window %.4g to %.4g %s", step/scale, unit, low, high, unit)
 	}
 	return fmt.Sprintf("no window: at least %.4g %s is needed to hold the joint, at most %.4g %s is tolerated (%s)",
 		low, unit, high, unit, w.toleratedBy)
+}
+
+// inwards rounds the ends of a window to 4 significant digits, inwards.
+func inwards(low, high float64) (float64, float64) {
+	step := func(v float64) float64 {
+		if v == 0 {
+			return 1
+		}
+		return math.Pow(10, math.Floor(math.Log10(math.Abs(v)))-3)
+	}
+	return quantity.RoundUp(low, step(low)), quantity.RoundDown(high, step(high))
 }
 
 // failures lists the checks that fail, and a snug torque that leaves nothing
