@@ -7,7 +7,7 @@ DEMO = testdata/demo/tarn40.yaml
 .PHONY: build demo test tools lint bench fuzz clean
 
 build:
-	$(GO) build -trimpath -o bin/clampback ./cmd/clampback
+	CGO_ENABLED=0 $(GO) build -trimpath -o bin/clampback ./cmd/clampback
 
 # The demo plant holds one infeasible joint on purpose: status 1 is its result.
 demo: build

@@ -3,7 +3,6 @@ package planner
 import (
 	"fmt"
 	"math"
-	"regexp"
 	"slices"
 	"strings"
 
@@ -88,10 +87,23 @@ func (v *validator) notNegative(value float64, field, what string) {
 		"%s is %g; it cannot be negative", what, value)
 }
 
-var idForm = regexp.MustCompile(`^[A-Za-z0-9._-]{1,40}$`)
+// validID reports whether an id can name a file: 1 to 40 letters, digits, . _ -, not
+// dots alone and no - in front.
+func validID(id string) bool {
+	if len(id) > 40 || strings.Trim(id, ".") == "" || id[0] == '-' {
+		return false
+	}
+	for _, r := range id {
+		letter := r >= 'a' && r <= 'z' || r >= 'A' && r <= 'Z' || r >= '0' && r <= '9'
+		if !letter && r != '.' && r != '_' && r != '-' {
+			return false
+		}
+	}
+	return true
+}
 
 func (v *validator) identity(j Joint) {
-	v.require(idForm.MatchString(j.ID) && strings.Trim(j.ID, ".") != "" && !strings.HasPrefix(j.ID, "-"), "id",
+	v.require(validID(j.ID), "id",
 		"use 1 to 40 letters, digits, . _ - and begin with none of \"-\"",
 		"id %q cannot name a file", j.ID)
 	v.require(j.Count >= 1 && j.Count <= MaxCount, "count",

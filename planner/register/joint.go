@@ -2,7 +2,6 @@ package register
 
 import (
 	"fmt"
-	"regexp"
 	"strings"
 
 	"clampback/friction"
@@ -58,7 +57,13 @@ func (d *decoder) joint(n *node) planner.Joint {
 	return j
 }
 
-var inchThread = regexp.MustCompile(`^(#\d+|\d+(/\d+)?|\d+-\d+/\d+)-\d+|UN[CFJR]?\b`)
+// isInchThread reports whether a designation is one of a unified thread: "1/2-13
+// UNC", "#8-32", "3/4-16".
+func isInchThread(designation string) bool {
+	size, rest, found := strings.Cut(designation, "-")
+	return strings.Contains(designation, "UN") ||
+		(found && rest != "" && strings.Trim(size, "#0123456789/ ") == "" && size != "")
+}
 
 func (d *decoder) bolt(parent *object) planner.Bolt {
 	var b planner.Bolt
@@ -66,7 +71,7 @@ func (d *decoder) bolt(parent *object) planner.Bolt {
 		return b
 	}
 	o := d.object(parent.node.get("bolt"), "bolt", "thread", "length", "head", "property_class", "shank", "segments")
-	if inchThread.MatchString(o.textIfScalar("thread")) {
+	if isInchThread(o.textIfScalar("thread")) {
 		d.at(o.node.get("thread").pos, "inch threads are not planned by this version",
 			"state an ISO metric thread, for example M12")
 		return b
