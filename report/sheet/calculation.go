@@ -2,6 +2,7 @@ package sheet
 
 import (
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/xuri/excelize/v2"
@@ -21,7 +22,7 @@ type calculation struct {
 
 // calculationWidths are the columns: symbol, meaning, value, unit, source, kind,
 // and for the checks two more.
-var calculationWidths = []float64{14, 50, 16, 8, 60, 11, 9, 9}
+var calculationWidths = []float64{12, 46, 14, 7, 48, 10, 9, 9}
 
 // The rows of a calculation sheet.
 const (
@@ -85,7 +86,7 @@ func (b *book) writeCalculation(c *calculation, index int) error {
 		{cell(0, clean(report.Fasteners(j)))},
 		{cell(s.bold, "Verdict"), nil, formula(s.warning, c.verdictFormula(checksFrom, checksTo),
 			verdictWord(c.plan.Feasible))},
-		{cell(0, "Framed cells are inputs: change one and every line below follows. "+caution)},
+		{cell(0, "Framed cells are inputs: change one and every formula follows; some inputs go together (see About). "+caution)},
 		{cell(s.heading, "symbol"), cell(s.heading, "meaning"), cell(s.heading, "value"), cell(s.heading, "unit"),
 			cell(s.heading, "source"), cell(s.heading, "kind")},
 	}
@@ -112,20 +113,36 @@ func (b *book) writeCalculation(c *calculation, index int) error {
 
 const caution = "Calculated, not tested on this joint; local codes and the judgement of a licensed engineer come first."
 
-// verdictFormula is the verdict as the sheet finds it.
+// The verdicts in words.
+const (
+	feasible   = "FEASIBLE"
+	infeasible = "INFEASIBLE: do not tighten"
+)
+
+// verdictFormula is the verdict as the sheet finds it: a setting, which snug
+// leaves something to tighten up to, and every check passed.
 func (c *calculation) verdictFormula(from, to int) string {
-	target := "T_A"
+	set := "T_A>0,T_S<T_A"
 	if c.plan.Joint.Tightening.Method == planner.TorqueAndAngleMethod {
-		target = "ang"
+		set = "ang>0"
 	}
-	return fmt.Sprintf(`IF(AND(%s>0,COUNTIF($H$%d:$H$%d,"FAILS")=0),"FEASIBLE","INFEASIBLE: do not tighten")`, target, from, to)
+	return fmt.Sprintf(`IF(AND(%s,COUNTIF($H$%d:$H$%d,"ok")=%d),"%s","%s")`, set, from, to, to-from+1, feasible, infeasible)
 }
 
-func verdictWord(feasible bool) string {
-	if feasible {
-		return "FEASIBLE"
+func verdictWord(ok bool) string {
+	if ok {
+		return feasible
 	}
-	return "INFEASIBLE: do not tighten"
+	return infeasible
+}
+
+// line returns the line of a symbol, if the plan has it.
+func (c *calculation) line(symbol string) (planner.Line, bool) {
+	i := slices.IndexFunc(c.plan.Trace, func(l planner.Line) bool { return l.Symbol == symbol })
+	if i < 0 {
+		return planner.Line{}, false
+	}
+	return c.plan.Trace[i], true
 }
 
 func orNone(s string) string {

@@ -160,18 +160,34 @@ func TestFormulasRecalculated(t *testing.T) {
 	}
 	t.Logf("%d cells of %d joints agree to 1e-10", cells, len(plans))
 
+	for i, p := range plans {
+		compareRegister(t, p, f, i)
+	}
+}
+
+// compareRegister holds a row of the recalculated register against a plan: an
+// infeasible joint has no target, no snug torque and no angle there.
+func compareRegister(t *testing.T, p planner.Plan, f *excelize.File, i int) {
 	rows, err := f.GetRows("Register", excelize.Options{RawCellValue: true})
 	require.NoError(t, err)
-	for i, p := range plans {
-		row := rows[5+i]
-		assert.Equal(t, p.ID, row[0])
-		required, err := strconv.ParseFloat(row[6], 64)
-		require.NoError(t, err)
-		same(t, p.WorkBack.RequiredPreload, required, p.ID+" in the register")
-		target, err := strconv.ParseFloat(row[9], 64)
-		require.NoError(t, err)
-		same(t, p.Torque.Target, target, p.ID+" target in the register")
+	row := rows[5+i]
+	require.Len(t, row, 15, p.ID)
+	assert.Equal(t, p.ID, row[0])
+	target, snug, angle := p.Torque.Target, p.Angle.SnugTorque, p.Angle.FromSnug
+	verdict := "FEASIBLE"
+	if !p.Feasible {
+		target, snug, angle = 0, 0, 0
+		verdict = "INFEASIBLE: do not tighten"
 	}
+	for column, want := range map[int]float64{
+		5: p.WorkBack.RequiredResidualClamp, 6: p.WorkBack.RequiredPreload, 7: p.Preload.Limit,
+		8: p.Torque.WindowLow, 9: target, 10: p.Torque.WindowHigh, 11: snug, 12: angle,
+	} {
+		got, err := strconv.ParseFloat(row[column], 64)
+		require.NoError(t, err, "%s, register column %d: %q", p.ID, column, row[column])
+		same(t, want, got, fmt.Sprintf("%s, register column %d", p.ID, column))
+	}
+	assert.Equal(t, verdict, row[14], p.ID)
 }
 
 // change is an input that an auditor changes in the sheet, and the same change
@@ -203,6 +219,8 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 		{5, "tol_ang", 4, func(j *planner.Joint) { j.Tightening.AngleTol = 4 }},
 		{6, "alpha_A", 2.2, func(j *planner.Joint) { j.Tightening.ScatterFactor = 2.2 }},
 		{7, "n", 0.9, func(j *planner.Joint) { *j.Loads.IntroductionFactor = 0.9 }},
+		{10, "s_S", 0.99, func(j *planner.Joint) { j.Tightening.Snug = 0.99 }},       // rounds to the target: infeasible
+		{0, "F_A_max", 60000, func(j *planner.Joint) { j.Loads.Axial.High = 60000 }}, // no window: infeasible
 		{9, "mu_G_max", 0.10, func(j *planner.Joint) { j.Friction.Thread.High = 0.10 }},
 	}
 	var books [][]byte
@@ -214,11 +232,15 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 		c.apply(&changed)
 		after, err := planner.Work(changed)
 		require.NoError(t, err)
-		assert.NotEqual(t, before[0].Checks, after.Checks, "the change %s must matter", c.symbol)
+		assert.False(t, before[0].Feasible == after.Feasible && assert.ObjectsAreEqual(before[0].Checks, after.Checks),
+			"the change %s must matter", c.symbol)
 		want = append(want, after)
 	}
 	for i, f := range recalculate(t, books...) {
-		t.Run(changes[i].symbol, func(t *testing.T) { compare(t, want[i], f) })
+		t.Run(changes[i].symbol, func(t *testing.T) {
+			compare(t, want[i], f)
+			compareRegister(t, want[i], f, 0)
+		})
 	}
 }
 

@@ -39,8 +39,9 @@ func (b *book) openSheet(name string, index int, p page, widths []float64) (*exc
 	if err := f.SetSheetProps(name, &excelize.SheetPropsOptions{FitToPage: &fit}); err != nil {
 		return nil, err
 	}
-	title := strings.ReplaceAll(clean(p.joint.Assembly+", revision "+orNone(p.joint.Revision)), "&", "&&")
-	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + cut(title, 100) + "&R&A",
+	title := cut(clean(p.joint.Assembly+", revision "+orNone(p.joint.Revision)), 100)
+	title = strings.ReplaceAll(title, "&", "&&") // & begins a code of the header
+	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + title + "&R&A",
 		OddFooter: "&LCalculated, not tested&RPage &P of &N"}); err != nil {
 		return nil, err
 	}
@@ -91,12 +92,10 @@ var columns = []column{
 	{"required preload, N", 11, link("F_Mreq")},
 	{"highest preload tolerated, N", 11, link("F_lim")},
 	{"torque low, N.m", 10, link("T_lo")},
-	{"target torque, N.m", 10, func(b *book, c *calculation) any {
-		return formula(b.styles.computed[noneFormat], quoted(c.sheet)+"!"+c.cells["T_A"], c.plan.Torque.Target)
-	}},
+	{"target torque, N.m", 10, setting("T_A", noneFormat)},
 	{"torque high, N.m", 10, link("T_hi")},
-	{"snug torque, N.m", 9, link("T_S")},
-	{"angle from snug, deg", 9, link("ang")},
+	{"snug torque, N.m", 9, setting("T_S", noneFormat)},
+	{"angle from snug, deg", 9, setting("ang", noneAngle)},
 	{"worst check, used", 9, func(b *book, c *calculation) any {
 		worst := 0.0
 		for _, check := range c.plan.Checks {
@@ -112,12 +111,29 @@ var columns = []column{
 // link returns a column that shows a symbol of the joint's sheet.
 func link(symbol string) func(*book, *calculation) any {
 	return func(b *book, c *calculation) any {
-		i := slices.IndexFunc(c.plan.Trace, func(l planner.Line) bool { return l.Symbol == symbol })
-		if i < 0 {
+		l, ok := c.line(symbol)
+		if !ok {
 			return cell(b.styles.text, "")
 		}
-		l := c.plan.Trace[i]
 		return formula(b.styles.computed[formatOf(l.Unit)], quoted(c.sheet)+"!"+c.cells[symbol], l.Value)
+	}
+}
+
+// setting is link for what a joint is tightened by: none while the joint's sheet
+// does not find it feasible.
+func setting(symbol, format string) func(*book, *calculation) any {
+	return func(b *book, c *calculation) any {
+		l, ok := c.line(symbol)
+		if !ok {
+			return cell(b.styles.text, "")
+		}
+		value := 0.0
+		if c.plan.Feasible {
+			value = l.Value
+		}
+		sheet := quoted(c.sheet) + "!"
+		return formula(b.styles.computed[format],
+			fmt.Sprintf(`IF(%s="%s",%s,0)`, sheet+c.verdict, feasible, sheet+c.cells[symbol]), value)
 	}
 }
 
@@ -234,6 +250,8 @@ func (b *book) writeAbout(plans []planner.Plan) error {
 			"Framed cells are inputs and can be changed; the formulas follow. The sheets are protected without a password against slips, not against intent.",
 			"The formulas are a second statement of the calculation, independent of the program that planned the joints; the program's own values stand in the cells until the spreadsheet recalculates.",
 			"What binds and the assumptions are text, as planned: they do not follow a changed input.",
+			"Inputs do not follow each other. What one statement of the register fixes together is changed together by hand: a thickness and the length of engaged thread l_eng; a hole, D_Ki and d_in; an outer diameter, D_A and D_out; the thread and all that was looked up for it.",
+			"A load of another kind (compression, slip, cycles) may need checks that the sheet does not hold: plan the joint anew.",
 			"Units: N, mm, MPa, N.m, deg, degC. Torques of the trace are N.m.",
 		}},
 		{"Cautions", []string{

@@ -76,7 +76,9 @@ func (b *book) fill(plans []planner.Plan) error {
 	if err := b.writeAbout(plans); err != nil {
 		return err
 	}
-	b.defineNames()
+	if err := b.defineNames(); err != nil {
+		return err
+	}
 	return b.properties()
 }
 
@@ -94,14 +96,14 @@ func (b *book) properties() error {
 
 // defineNames adds all names at once: the library's own call compares each new
 // name with all others, which takes minutes for a large register.
-func (b *book) defineNames() {
+func (b *book) defineNames() error {
 	if len(b.names) == 0 {
-		return
+		return nil
 	}
 	first := b.names[0]
 	// The first name makes the list; its element is then the pattern for the rest.
 	if err := b.file.SetDefinedName(&excelize.DefinedName{Name: first.name, RefersTo: first.target}); err != nil {
-		panic(fmt.Sprintf("the name %q is not valid: %v", first.name, err)) // symbols are tested to be valid names
+		return fmt.Errorf("naming the cell %s: %w", first.name, err)
 	}
 	list := &b.file.WorkBook.DefinedNames.DefinedName
 	pattern := (*list)[len(*list)-1]
@@ -112,4 +114,5 @@ func (b *book) defineNames() {
 		pattern.LocalSheetID = &sheet
 		*list = append(*list, pattern)
 	}
+	return nil
 }

@@ -5,9 +5,11 @@ import (
 	"bytes"
 	"fmt"
 	"io"
+	"regexp"
 	"runtime"
 	"strings"
 	"testing"
+	"testing/fstest"
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
@@ -68,6 +70,63 @@ func TestInfeasibleJointSaysSo(t *testing.T) {
 	verdict, err := f.GetCellValue("TRN-100", "C4")
 	require.NoError(t, err)
 	assert.Equal(t, "INFEASIBLE: do not tighten", verdict)
+}
+
+// A snug torque that reaches the target leaves nothing to tighten: the sheet must
+// not call feasible what the plan does not, and the register offers no setting.
+func TestSnugAboveTargetIsInfeasible(t *testing.T) {
+	joints := demo.Joints(t)[:1]
+	joints[0].Tightening.Snug, joints[0].Tightening.SnugTorque = 0, 150e3 // N.mm; the target is 98 N.m
+	plans := demo.PlanAll(t, joints)
+	require.False(t, plans[0].Feasible)
+	f := open(t, write(t, plans))
+	for _, at := range []string{"J6", "L6", "M6"} {
+		value, err := f.GetCellValue("Register", at, excelize.Options{RawCellValue: true})
+		require.NoError(t, err)
+		assert.Equal(t, "0", value, "%s: 0 is shown as the word none", at)
+	}
+}
+
+// Symbols become names of cells, which a spreadsheet compares without case and
+// does not tell from references (ECMA-376 Part 1, 18.2.5).
+func TestSymbolsAreNamesOfCells(t *testing.T) {
+	name := regexp.MustCompile(`^[A-Za-z_][A-Za-z0-9_.]*$`)
+	reference := regexp.MustCompile(`(?i)^([a-z]{1,3}[0-9]+|r[0-9]*c?[0-9]*|c[0-9]*)$`)
+	for _, p := range demo.Plans(t) {
+		seen := map[string]string{}
+		for _, l := range p.Trace {
+			assert.Regexp(t, name, l.Symbol)
+			assert.NotRegexp(t, reference, l.Symbol)
+			folded := strings.ToLower(l.Symbol)
+			assert.Empty(t, seen[folded], "%s: %s", p.ID, l.Symbol)
+			seen[folded] = l.Symbol
+		}
+	}
+}
+
+// A template with a mistake is refused with its place, never written as it is.
+func TestTemplateMistakesAreRefused(t *testing.T) {
+	for text, want := range map[string]string{
+		"rule,formula\nd_2,1\n":             "no rule",
+		"rule,formula\nd_2,1\nd_2,2\n":      "calculation.csv:3",
+		"rule,formula\nd_2,1,2\n":           "line 2",
+		"rule,formula\nd_2,{sum nothing}\n": "cannot be filled",
+		"rule,formula\n":                    "no lines",
+	} {
+		folder := fstest.MapFS{"calculation.csv": {Data: []byte(text)}}
+		err := sheet.Write(io.Discard, demo.Plans(t), sheet.Options{Templates: folder})
+		assert.ErrorContains(t, err, want, text)
+	}
+}
+
+// An ampersand is a code in a header: doubled, also where a long title is cut.
+func TestHeaderKeepsAmpersand(t *testing.T) {
+	joints := demo.Joints(t)[:1]
+	joints[0].Assembly = strings.Repeat("&", 120)
+	f := open(t, write(t, demo.PlanAll(t, joints)))
+	header, err := f.GetHeaderFooter("Register")
+	require.NoError(t, err)
+	assert.Equal(t, "&L"+strings.Repeat("&", 200)+"&R&A", header.OddHeader)
 }
 
 // What a user writes never becomes a formula, whatever it begins with.

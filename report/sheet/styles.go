@@ -15,10 +15,14 @@ type styles struct {
 	computed map[string]int // by number format, locked
 }
 
-// formats are all number formats; noneFormat shows 0 as a word.
-var formats = []string{"0", "0.000", "0.00", "0.0", "0.0000E+00", "0%", "0.####", noneFormat}
+// formats are all number formats.
+var formats = []string{"0", "0.000", "0.00", "0.0", "0.0000E+00", "0%", "0.####", noneFormat, noneAngle}
 
-const noneFormat = `0.00;-0.00;"none"`
+// Formats of what an infeasible joint does not have.
+const (
+	noneFormat = `0.00;-0.00;"none"`
+	noneAngle  = `0.0;-0.0;"none"`
+)
 
 // formatOf returns the number format of a unit.
 func formatOf(unit string) string {
@@ -55,7 +59,8 @@ func newStyles(f *excelize.File) (styles, error) {
 		&s.wrapped: {Border: hairline, Alignment: top},
 		&s.bold: {Font: &excelize.Font{Family: family, Bold: true, Size: 11},
 			Alignment: &excelize.Alignment{Vertical: "top"}},
-		&s.warning: {Font: &excelize.Font{Family: family, Bold: true, Size: 14}},
+		&s.warning: {Font: &excelize.Font{Family: family, Bold: true, Size: 14},
+			Alignment: &excelize.Alignment{Vertical: "top"}},
 	}
 	// The order of creation numbers the styles: it must not follow the map.
 	for _, id := range []*int{&s.title, &s.heading, &s.text, &s.wrapped, &s.bold, &s.warning} {

@@ -5,8 +5,8 @@ import (
 	"bytes"
 	"io"
 	"io/fs"
+	"regexp"
 	"slices"
-	"strings"
 
 	"github.com/xuri/excelize/v2"
 )
@@ -71,26 +71,12 @@ func (z *sortedZip) Close() error {
 
 // sortContentTypes orders the elements of the list of parts.
 func sortContentTypes(data []byte) []byte {
-	text := string(data)
-	start := strings.Index(text, "<Default ")
-	if other := strings.Index(text, "<Override "); start < 0 || (other >= 0 && other < start) {
-		start = other
-	}
-	end := strings.LastIndex(text, "</Types>")
-	if start < 0 || end < start {
-		return data
-	}
-	elements := strings.SplitAfter(text[start:end], "></")
-	if len(elements) == 1 { // self-closing elements
-		elements = strings.SplitAfter(text[start:end], "/>")
-	} else {
-		elements = strings.SplitAfter(text[start:end], "></Override>")
-		var all []string
-		for _, e := range elements {
-			all = append(all, strings.SplitAfter(e, "></Default>")...)
-		}
-		elements = all
-	}
-	slices.Sort(elements)
-	return []byte(text[:start] + strings.Join(elements, "") + text[end:])
+	part := regexp.MustCompile(`<(?:Default|Override) [^>]*(?:/>|></(?:Default|Override)>)`)
+	parts := part.FindAll(data, -1)
+	slices.SortFunc(parts, bytes.Compare)
+	next := -1
+	return part.ReplaceAllFunc(data, func([]byte) []byte {
+		next++
+		return parts[next]
+	})
 }
