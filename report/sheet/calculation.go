@@ -86,7 +86,7 @@ func (b *book) writeCalculation(c *calculation, index int) error {
 		{cell(0, clean(report.Fasteners(j)))},
 		{cell(s.bold, "Verdict"), nil, formula(s.warning, c.verdictFormula(checksFrom, checksTo),
 			verdictWord(c.plan.Feasible))},
-		{cell(0, "Framed cells are inputs: change one and every formula follows; some inputs go together (see About). "+caution)},
+		{cell(0, "Framed cells are inputs, which the formulas follow; some go together (see About). "+caution)},
 		{cell(s.heading, "symbol"), cell(s.heading, "meaning"), cell(s.heading, "value"), cell(s.heading, "unit"),
 			cell(s.heading, "source"), cell(s.heading, "kind")},
 	}

@@ -171,7 +171,7 @@ func compareRegister(t *testing.T, p planner.Plan, f *excelize.File, i int) {
 	rows, err := f.GetRows("Register", excelize.Options{RawCellValue: true})
 	require.NoError(t, err)
 	row := rows[5+i]
-	require.Len(t, row, 15, p.ID)
+	require.Len(t, row, 16, p.ID)
 	assert.Equal(t, p.ID, row[0])
 	target, snug, angle := p.Torque.Target, p.Angle.SnugTorque, p.Angle.FromSnug
 	verdict := "FEASIBLE"
@@ -188,6 +188,7 @@ func compareRegister(t *testing.T, p planner.Plan, f *excelize.File, i int) {
 		same(t, want, got, fmt.Sprintf("%s, register column %d", p.ID, column))
 	}
 	assert.Equal(t, verdict, row[14], p.ID)
+	assert.Equal(t, p.Joint.Revision, row[15], p.ID)
 }
 
 // change is an input that an auditor changes in the sheet, and the same change

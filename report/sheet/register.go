@@ -103,8 +103,11 @@ var columns = []column{
 		}
 		return formula(b.styles.computed["0%"], c.worst, worst)
 	}},
-	{"verdict", 26, func(b *book, c *calculation) any {
-		return formula(b.styles.bold, quoted(c.sheet)+"!"+c.verdict, verdictWord(c.plan.Feasible))
+	{"verdict", 28, func(b *book, c *calculation) any {
+		return formula(b.styles.verdict, quoted(c.sheet)+"!"+c.verdict, verdictWord(c.plan.Feasible))
+	}},
+	{"revision", 9, func(b *book, c *calculation) any {
+		return cell(b.styles.wrapped, clean(orNone(c.plan.Joint.Revision)))
 	}},
 }
 
@@ -259,7 +262,7 @@ func (b *book) writeAbout(plans []planner.Plan) error {
 			"A changed input is a new calculation: plan, check and release it before anyone tightens by it.",
 			"An infeasible joint has no setting. Do not tighten it by any figure of its sheet.",
 		}},
-		{"Sources cited", sourcesOf(plans)},
+		{"Where the numbers come from", sourcesOf(plans)},
 	}
 	if err := w.put(cell(b.styles.title, "About this workbook")); err != nil {
 		return err

@@ -10,6 +10,7 @@ type styles struct {
 	text     int
 	wrapped  int
 	bold     int
+	verdict  int // bold, clear of the number to its left
 	warning  int
 	inputs   map[string]int // by number format, unlocked
 	computed map[string]int // by number format, locked
@@ -59,11 +60,13 @@ func newStyles(f *excelize.File) (styles, error) {
 		&s.wrapped: {Border: hairline, Alignment: top},
 		&s.bold: {Font: &excelize.Font{Family: family, Bold: true, Size: 11},
 			Alignment: &excelize.Alignment{Vertical: "top"}},
+		&s.verdict: {Font: &excelize.Font{Family: family, Bold: true, Size: 11},
+			Alignment: &excelize.Alignment{Vertical: "top", Horizontal: "left", Indent: 1}},
 		&s.warning: {Font: &excelize.Font{Family: family, Bold: true, Size: 14},
 			Alignment: &excelize.Alignment{Vertical: "top"}},
 	}
 	// The order of creation numbers the styles: it must not follow the map.
-	for _, id := range []*int{&s.title, &s.heading, &s.text, &s.wrapped, &s.bold, &s.warning} {
+	for _, id := range []*int{&s.title, &s.heading, &s.text, &s.wrapped, &s.bold, &s.verdict, &s.warning} {
 		var err error
 		if *id, err = f.NewStyle(plain[id]); err != nil {
 			return s, err
