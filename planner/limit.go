@@ -25,8 +25,9 @@ func (w *work) limit() {
 		bounds = append(bounds, bound{"thread stripping", force})
 		rule = "F_lim.tapped"
 	} else {
-		w.input("l_eng", "length of engaged thread", w.joint.Engagement(), "mm", stated)
+		w.input("l_b", "length of the bolt under the head", w.joint.Bolt.Length, "mm", stated)
 		w.input("m_N", "height of the nut", w.joint.Nut.Height, "mm", w.joint.Nut.Source)
+		w.lineBy("l_eng.nut", "l_eng", "length of engaged thread", w.joint.Engagement(), "mm", arithmetic)
 	}
 	least := bounds[0]
 	for _, b := range bounds[1:] {

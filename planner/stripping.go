@@ -100,7 +100,9 @@ func (w *work) stripping() {
 
 	perLength := w.line("q_strip", "stripping force over length of engagement",
 		math.Min(tappedFactor*tapped.ShearStrength*tappedArea, boltFactor*boltStrength*boltArea), "N/mm", guideline+"R11")
-	w.input("l_eng", "length of engaged thread", j.Engagement(), "mm", stated)
+	w.input("l_b", "length of the bolt under the head", j.Bolt.Length, "mm", stated)
+	w.input("t_T", "usable depth of the tapped thread", j.Tapped.Depth, "mm", stated)
+	w.lineBy("l_eng.tapped", "l_eng", "length of engaged thread", j.Engagement(), "mm", arithmetic)
 	effective := math.Max(0, j.Engagement()-0.8*t.pitch)
 	w.strip = w.line("F_strip", "bolt force that strips the thread", perLength*effective, "N", guideline+"R11")
 	w.engagementNeeded = w.line("l_req", "engagement with which the bolt breaks first",

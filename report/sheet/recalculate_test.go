@@ -179,9 +179,11 @@ func compareRegister(t *testing.T, p planner.Plan, f *excelize.File, i int) {
 		target, snug, angle = 0, 0, 0
 		verdict = "INFEASIBLE: do not tighten"
 	}
+	// Limits are rounded inwards: to 1 N, to 0.01 N.m.
 	for column, want := range map[int]float64{
-		5: p.WorkBack.RequiredResidualClamp, 6: p.WorkBack.RequiredPreload, 7: p.Preload.Limit,
-		8: p.Torque.WindowLow, 9: target, 10: p.Torque.WindowHigh, 11: snug, 12: angle,
+		5: math.Ceil(p.WorkBack.RequiredResidualClamp * (1 - 1e-12)), 6: math.Ceil(p.WorkBack.RequiredPreload),
+		7: math.Floor(p.Preload.Limit), 8: math.Ceil(p.Torque.WindowLow*100) / 100, 9: target,
+		10: math.Floor(p.Torque.WindowHigh*100) / 100, 11: snug, 12: angle,
 	} {
 		got, err := strconv.ParseFloat(row[column], 64)
 		require.NoError(t, err, "%s, register column %d: %q", p.ID, column, row[column])
@@ -210,6 +212,7 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 		{0, "mu_G_max", 0.17, func(j *planner.Joint) { j.Friction.Thread.High = 0.17 }},
 		{0, "D_A", 22, func(j *planner.Joint) { j.Parts[0].OuterDiameter = 22 }},
 		{0, "temp_hi", 140, func(j *planner.Joint) { j.Temperature.Service.High = 140 }},
+		{1, "h_2", 44, func(j *planner.Joint) { j.Parts[0].Thickness = 44 }}, // too little thread engaged
 		{1, "mu_K_min", 0.06, func(j *planner.Joint) { j.Friction.Head.Low = 0.06 }},
 		{1, "tau_BM", 90, func(j *planner.Joint) { j.Tapped.Material.ShearStrength = 90 }},
 		{2, "F_Q", 3100, func(j *planner.Joint) { j.Clamp.Transverse = 3100 }},

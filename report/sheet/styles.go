@@ -17,11 +17,11 @@ type styles struct {
 }
 
 // formats are all number formats.
-var formats = []string{"0", "0.000", "0.00", "0.0", "0.0000E+00", "0%", "0.####", noneFormat, noneAngle}
+var formats = []string{"0", "0.000", "0.00", "0.00##", "0.0", "0.0000E+00", "0%", "0.####", noneFormat, noneAngle}
 
 // Formats of what an infeasible joint does not have.
 const (
-	noneFormat = `0.00;-0.00;"none"`
+	noneFormat = `0.00##;-0.00##;"none"`
 	noneAngle  = `0.0;-0.0;"none"`
 )
 
@@ -32,7 +32,9 @@ func formatOf(unit string) string {
 		return "0"
 	case "mm":
 		return "0.000"
-	case "N.m", "mm2", "N/mm":
+	case "N.m":
+		return "0.00##" // a setting may have a fine step
+	case "mm2", "N/mm":
 		return "0.00"
 	case "MPa", "deg", "degC", "um":
 		return "0.0"
