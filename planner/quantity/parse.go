@@ -29,11 +29,12 @@ func Parse(text string, d Dimension) (float64, error) {
 	if err != nil {
 		return 0, err
 	}
-	value = value*u.factor + u.offset
-	if math.IsInf(value, 0) {
-		return 0, &Error{fmt.Sprintf("%q is too large", text), fmt.Sprintf("write it as %s", d.Example())}
+	inner := value*u.factor + u.offset
+	if math.IsInf(inner, 0) || (inner == 0 && value != 0 && u.offset == 0) {
+		return 0, &Error{fmt.Sprintf("%q is outside the numbers that can be used", text),
+			fmt.Sprintf("write it as %s", d.Example())}
 	}
-	return value, nil
+	return inner, nil
 }
 
 // ParseRange reads "low to high" with the unit after the last number or after
@@ -44,13 +45,18 @@ func ParseRange(text string, d Dimension) (Range, error) {
 		v, err := Parse(text, d)
 		return Single(v), err
 	}
+	_, unitBefore := split(lowText)
+	_, unitAfter := split(highText)
+	if unitBefore != "" && unitAfter == "" && d != Number {
+		return Range{}, &Error{fmt.Sprintf("%q has its unit after the lower end only", text),
+			"write the unit after the last number, or after both"}
+	}
 	high, err := Parse(highText, d)
 	if err != nil {
 		return Range{}, err
 	}
-	if _, own := split(lowText); own == "" {
-		_, unitName := split(highText)
-		lowText += " " + unitName
+	if unitBefore == "" {
+		lowText += " " + unitAfter
 	}
 	low, err := Parse(lowText, d)
 	if err != nil {
@@ -93,17 +99,22 @@ func parseNumber(number, text string, d Dimension) (float64, error) {
 	example := fmt.Sprintf("write it as %s", d.Example())
 	switch {
 	case number == "":
-		return 0, &Error{fmt.Sprintf("%q is not a %s", text, d), example}
+		return 0, &Error{fmt.Sprintf("%q is not %s", text, d.oneOf()), example}
 	case strings.Contains(number, ","):
 		return 0, &Error{fmt.Sprintf("%q has a comma", text), "use a point for decimals and no thousands separators"}
 	case strings.Contains(number, "_"):
 		return 0, &Error{fmt.Sprintf("%q has an underscore", text), "write the number without it"}
 	}
+	mantissa, _, _ := strings.Cut(strings.ToLower(number), "e")
 	value, err := strconv.ParseFloat(number, 64)
-	if err != nil || math.IsInf(value, 0) || math.IsNaN(value) {
-		return 0, &Error{fmt.Sprintf("%q is not a number that can be used", number), example}
+	vanished := value == 0 && strings.ContainsAny(mantissa, "123456789") // too small to hold
+	if err == nil && !vanished {
+		return value, nil
 	}
-	return value, nil
+	if strings.Contains(strings.TrimLeft(mantissa, "+-"), "-") || strings.Contains(mantissa, "..") {
+		example += "; a range has the word to between its ends"
+	}
+	return 0, &Error{fmt.Sprintf("%q is not a number that can be used", number), example}
 }
 
 // resolve finds the unit and checks that it belongs to the dimension.
@@ -126,7 +137,7 @@ func resolve(name, text string, d Dimension) (unit, error) {
 		return unit{}, &Error{fmt.Sprintf("unknown unit %q", name), fmt.Sprintf("use %s", unitsOf(d))}
 	}
 	if u.dimension != d {
-		return unit{}, &Error{fmt.Sprintf("%q is a %s, but a %s belongs here", text, u.dimension, d),
+		return unit{}, &Error{fmt.Sprintf("%q is %s, but %s belongs here", text, u.dimension.oneOf(), d.oneOf()),
 			fmt.Sprintf("write it as %s", d.Example())}
 	}
 	return u, nil

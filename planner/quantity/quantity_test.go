@@ -3,6 +3,7 @@ package quantity_test
 import (
 	"fmt"
 	"math"
+	"strconv"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -85,6 +86,22 @@ func TestParseRefusesWithAMend(t *testing.T) {
 		{"9 to 3 kN", quantity.Force, `"9 to 3 kN" runs backwards`, `write the lower end first, for example "3 kN to ..."`},
 		{"8 mm", quantity.Number, `"8 mm" has a unit, but a plain number belongs here`, "leave the unit out"},
 		{"", quantity.Force, `"" is not a force`, "write it as 12 kN"},
+		{"3 mm", quantity.Area, `"3 mm" is a length, but an area belongs here`, "write it as 2400 mm2"},
+		{"x", quantity.Angle, `"x" is not an angle`, "write it as 30 deg"},
+		{"10 % to 0.14", quantity.Ratio, `"10 % to 0.14" has its unit after the lower end only`,
+			"write the unit after the last number, or after both"},
+		{"5 kN to 9", quantity.Force, `"5 kN to 9" has its unit after the lower end only`,
+			"write the unit after the last number, or after both"},
+		{"0-9.5 kN", quantity.Force, `"0-9.5" is not a number that can be used`,
+			"write it as 12 kN; a range has the word to between its ends"},
+		{"0..9.5 kN", quantity.Force, `"0..9.5" is not a number that can be used`,
+			"write it as 12 kN; a range has the word to between its ends"},
+		{"inf N", quantity.Force, `"inf N" is not a force`, "write it as 12 kN"},
+		{"1e-400 N", quantity.Force, `"1e-400" is not a number that can be used`, "write it as 12 kN"},
+		{"1e-323 um", quantity.Length, `"1e-323 um" is outside the numbers that can be used`, "write it as 12 mm"},
+		{"1e308 kN", quantity.Force, `"1e308 kN" is outside the numbers that can be used`, "write it as 12 kN"},
+		{"12 N/mm^2", quantity.Pressure, `unknown unit "N/mm^2"`, "write MPa"},
+		{"0x1p4 N", quantity.Force, `unknown unit "x1p4 N"`, "use N, kN, lbf or kip"},
 	}
 	for _, c := range cases {
 		_, err := quantity.ParseRange(c.text, c.dimension)
@@ -109,10 +126,37 @@ func TestRoundingMovesInwards(t *testing.T) {
 	})
 }
 
+// A value that is itself written with the step's digits is not moved at all, and
+// prints with no more digits than the step.
+func TestRoundingKeepsDecimalMultiples(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		n := rapid.IntRange(-100_000, 100_000).Draw(t, "n")
+		digits := rapid.IntRange(0, 3).Draw(t, "digits")
+		step := math.Pow10(-digits)
+		v, err := strconv.ParseFloat(fmt.Sprintf("%de-%d", n, digits), 64)
+		require.NoError(t, err)
+		require.Equal(t, v, quantity.RoundDown(v, step))
+		require.Equal(t, v, quantity.RoundUp(v, step))
+		if n != 0 { // noise is relative
+			require.Equal(t, v, quantity.RoundDown(math.Nextafter(v, math.Inf(-1)), step), "one ulp is noise")
+		}
+	})
+}
+
+// Where a step is below the rounding of the number, rounding still moves it by
+// less than a step.
+func TestRoundingOfHugeNumbers(t *testing.T) {
+	assert.Equal(t, 1e15, quantity.RoundDown(1e15, 1))
+	assert.Equal(t, 1e15, quantity.RoundUp(1e15, 1))
+}
+
 func TestRoundingForgivesNoise(t *testing.T) {
 	assert.Equal(t, 0.3, quantity.RoundDown(0.1+0.2, 0.1))
 	assert.Equal(t, 0.3, quantity.RoundUp(0.1+0.2, 0.1))
 	assert.Equal(t, 83.0, quantity.RoundDown(83.99, 1))
+	assert.Equal(t, 0.9, quantity.RoundDown(0.9, 0.3))
+	assert.Equal(t, 3.3, quantity.RoundUp(3.3, 1.1))
+	assert.Equal(t, 7.5, quantity.RoundDown(7.5, 2.5))
 	assert.Equal(t, "83", quantity.Trim(83))
 	assert.Equal(t, "9.5", quantity.Trim(9.5))
 	assert.Equal(t, "1200", quantity.Trim(1200))
@@ -125,6 +169,41 @@ func TestTrimReadsBack(t *testing.T) {
 		got, err := quantity.Parse(quantity.Trim(v)+" mm", quantity.Length)
 		require.NoError(t, err)
 		require.InEpsilon(t, v, got, 1e-5)
+	})
+}
+
+func TestFormatPrintsAsItIsWritten(t *testing.T) {
+	cases := []struct {
+		value     float64
+		dimension quantity.Dimension
+		want      string
+	}{
+		{13.5, quantity.Length, "13.5 mm"},
+		{-12000, quantity.Force, "-12 kN"},
+		{999, quantity.Force, "999 N"},
+		{83000, quantity.Torque, "83 N.m"},
+		{205000, quantity.Pressure, "205000 MPa"},
+		{11.5e-6, quantity.Expansion, "11.5 um/m/K"},
+		{-273.15, quantity.Temperature, "-273.15 degC"},
+		{0.14, quantity.Ratio, "0.14"},
+		{2e6, quantity.Number, "2000000"},
+		{1e300, quantity.Length, "1e+300 mm"},
+	}
+	for _, c := range cases {
+		assert.Equal(t, c.want, quantity.Format(c.value, c.dimension))
+	}
+}
+
+// What Format prints, Parse reads as the same value, to the 6 digits printed.
+func TestFormatReadsBack(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		d := quantity.Dimension(rapid.IntRange(int(quantity.Number), int(quantity.Expansion)).Draw(t, "dimension"))
+		v := rapid.Float64().Filter(func(v float64) bool {
+			return math.Abs(v) < 1e300 && math.Abs(v) > 1e-300
+		}).Draw(t, "v")
+		got, err := quantity.Parse(quantity.Format(v, d), d)
+		require.NoError(t, err)
+		require.InEpsilon(t, v, got, 5.1e-6)
 	})
 }
 

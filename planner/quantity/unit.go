@@ -39,6 +39,15 @@ var dimensions = map[Dimension]struct{ name, example string }{
 // String names the dimension as error messages do.
 func (d Dimension) String() string { return dimensions[d].name }
 
+// oneOf names the dimension with its article: "a force", "an angle".
+func (d Dimension) oneOf() string {
+	name := d.String()
+	if strings.IndexByte("aeiou", name[0]) >= 0 {
+		return "an " + name
+	}
+	return "a " + name
+}
+
 // Example returns a quantity of the dimension as it is written.
 func (d Dimension) Example() string { return dimensions[d].example }
 
@@ -97,7 +106,9 @@ var spellings = map[string]string{
 	"ft-lb": "lbf.ft", "in.lbf": "lbf.in", "in-lb": "lbf.in", "lb.in": "lbf.in", "lb": "lbf", "µm": "um", "μm": "um",
 	"micron": "um", "°": "deg", "°C": "degC", "C": "degC", "°F": "degF", "F": "degF", "inch": "in", "\"": "in", "N/mm2": "MPa",
 	"N/mm²": "MPa", "mm²": "mm2", "cm²": "cm2", "kpsi": "ksi", "percent": "%", "KN": "kN", "kn": "kN", "mpa": "MPa", "MM": "mm",
-	"degrees": "deg", "degree": "deg",
+	"degrees": "deg", "degree": "deg", "mm^2": "mm2", "cm^2": "cm2", "in^2": "in2", "N/mm^2": "MPa", "lbs": "lbf", "lbf-ft": "lbf.ft",
+	"lbf-in": "lbf.in", "ft-lbf": "lbf.ft", "in-lbf": "lbf.in", "µm/m/K": "um/m/K", "μm/m/K": "um/m/K", "ppm/K": "um/m/K",
+	"um/(m.K)": "um/m/K", "1/degC": "1/K", "/K": "1/K", "K^-1": "1/K", "Celsius": "degC",
 }
 
 func findUnit(name string) (unit, bool) {
