@@ -22,7 +22,7 @@ func TestImpossibleIsAnErrorInfeasibleAPlan(t *testing.T) {
 	require.ErrorAs(t, err, &faults)
 	assert.Len(t, faults.Faults, 2)
 	assert.EqualError(t, err, "joint J-1: clamped[0].hole: the hole of 11 mm is smaller than the thread of 12 mm; "+
-		"clamped[1].thickness: the thickness is 0; it must be above 0")
+		"clamped[1].thickness: the thickness is 0 mm; it must be above 0")
 
 	j = flange(t)
 	j.Clamp.Residual = 60000

@@ -2,89 +2,46 @@ package planner
 
 import (
 	"fmt"
-	"math"
 	"slices"
 	"strings"
 
+	"clampback/planner/fastener"
 	"clampback/planner/quantity"
 )
 
-// Fault is one thing that is wrong with a joint. Path names the field as the
-// register spells it ("clamped[1].hole"), so that a reader can point at it.
-type Fault struct {
-	Path    string
-	Message string // what is wrong, with the numbers
-	Mend    string // how to put it right
-}
+// MaxCount is the largest number of bolts in a joint, MaxPositions the largest of
+// a pattern, which is drawn.
+const (
+	MaxCount     = 10_000
+	MaxPositions = 1_000
+)
 
-// FaultsError is every fault of one joint.
-type FaultsError struct {
-	ID     string
-	Faults []Fault
-}
-
-// Error lists the faults on one line.
-func (e *FaultsError) Error() string {
-	texts := make([]string, len(e.Faults))
-	for i, f := range e.Faults {
-		texts[i] = f.Path + ": " + f.Message
-	}
-	return "joint " + e.ID + ": " + strings.Join(texts, "; ")
-}
-
-// MaxCount is the largest number of bolts in a joint.
-const MaxCount = 10000
-
-// Faults returns everything that is impossible about the joint, in the order
-// of the register's keys; none means that Work can plan it. These rules stand
-// here alone: readers attach positions to them.
+// Faults returns everything that is impossible about the joint; none means that
+// Work can plan it. These rules stand here alone: readers attach positions to
+// them. What needs several fields to be judged is not judged while one of them is
+// impossible by itself.
 func (j Joint) Faults() []Fault {
 	v := &validator{}
 	v.identity(j)
-	v.bolt(j)
+	before := len(v.faults)
+	v.bolt(j.Bolt)
 	v.ends(j)
-	v.parts(j)
-	if len(v.faults) == 0 {
-		v.fit(j) // needs the single dimensions in order
+	for i, p := range j.Parts {
+		v.part(i, p, j.Bolt.Thread.Diameter)
 	}
+	if v.require(len(j.Parts) > 0, at("clamped"), "list the clamped parts from the head down", "no clamped part is stated") {
+		v.fit(j, len(v.faults) == before)
+	}
+	v.materials(j)
+	v.pattern(j)
 	v.clamp(j.Clamp)
-	v.loads(j)
+	v.loads(j.Loads)
 	v.temperature(j.Temperature)
 	v.friction(j.Friction)
 	v.tightening(j.Tightening)
-	v.require(j.Roughness >= 0 && j.Roughness < MaxRoughness, "surfaces",
-		fmt.Sprintf("Rz %g um lies outside the embedding table, which ends at 160 um",
-			j.Roughness*1000), "state Rz below 160 um")
+	v.require(j.Roughness >= 0 && j.Roughness < MaxRoughness, at("surfaces"), "state Rz above 0 and below 160 um",
+		"Rz %g um lies outside the embedding table, which ends at 160 um", j.Roughness*1000)
 	return v.faults
-}
-
-// validator gathers faults. Messages are only put together for what fails.
-type validator struct {
-	faults []Fault
-	list   string // the list whose item is judged: paths are then list[index].field
-	index  int
-}
-
-// require adds a fault unless ok.
-func (v *validator) require(ok bool, field, mend, format string, args ...any) bool {
-	if !ok {
-		if v.list != "" {
-			field = fmt.Sprintf("%s[%d].%s", v.list, v.index, field)
-		}
-		v.faults = append(v.faults, Fault{field, fmt.Sprintf(format, args...), mend})
-	}
-	return ok
-}
-
-// positive requires a number above 0.
-func (v *validator) positive(value float64, field, what, mend string) {
-	v.require(value > 0 && !math.IsInf(value, 0), field, mend, "%s is %g; it must be above 0", what, value)
-}
-
-// notNegative requires a number of 0 or more.
-func (v *validator) notNegative(value float64, field, what string) {
-	v.require(value >= 0 && !math.IsInf(value, 0), field, "state it as a positive number, or leave it out",
-		"%s is %g; it cannot be negative", what, value)
 }
 
 // validID reports whether an id can name a file: 1 to 40 letters, digits, . _ -, not
@@ -103,171 +60,132 @@ func validID(id string) bool {
 }
 
 func (v *validator) identity(j Joint) {
-	v.require(validID(j.ID), "id",
-		"use 1 to 40 letters, digits, . _ - and begin with none of \"-\"",
+	v.require(validID(j.ID), at("id"), "use 1 to 40 letters, digits, . _ - and begin with none of \"-\"",
 		"id %q cannot name a file", j.ID)
-	v.require(j.Count >= 1 && j.Count <= MaxCount, "count",
-		fmt.Sprintf("state how many bolts the joint has, 1 to %d", MaxCount),
-		"count is %d", j.Count)
-	if n := len(j.Pattern.Points); n > 0 {
-		v.require(n == j.Count, "pattern", "make count and pattern agree",
-			"the pattern has %d positions, the joint %d bolts", n, j.Count)
-	}
+	v.require(j.Count >= 1 && j.Count <= MaxCount, at("count"),
+		fmt.Sprintf("state how many bolts the joint has, 1 to %d", MaxCount), "count is %d", j.Count)
 }
 
-func (v *validator) bolt(j Joint) {
-	b := j.Bolt
-	v.positive(b.Length, "bolt.length", "the bolt's length", "state the length from under the head to the end")
+func (v *validator) bolt(b Bolt) {
+	thread := b.Thread.Diameter
+	v.require(thread > 0, at("bolt.thread"), "state the thread, for example M12", "no thread is stated")
+	v.require(b.Head.BearingDiameter > 0, at("bolt.head", "bolt.thread"), "state the head, for example hexagon",
+		"no head is stated")
+	v.require(b.Class.YieldStrength > 0, at("bolt.property_class", "bolt.thread"), "state the property class, for example 8.8",
+		"no property class is stated")
+	v.positive(b.Length, lengths, at("bolt.length"), "the bolt's length", "state the length from under the head to the end")
 	if b.Shank != nil {
-		v.require(len(b.Segments) == 0, "bolt.segments", "keep one of them", "both shank and segments are stated")
-		v.notNegative(*b.Shank, "bolt.shank", "the shank")
+		v.require(len(b.Segments) == 0, at("bolt.segments", "bolt.shank"), "keep one of them",
+			"both shank and segments are stated")
+		v.notNegative(*b.Shank, lengths, at("bolt.shank"), "the shank")
 	}
 	for i, s := range b.Segments {
-		v.list, v.index = "bolt.segments", i
-		v.positive(s.Length, "length", "the segment's length", "state a length, or leave the segment out")
-		v.require(s.Diameter > 0 && s.Diameter <= b.Thread.Diameter, "diameter",
+		v.positive(s.Length, lengths, itemOf("bolt.segments", i, "length"), "the segment's length",
+			"state a length, or leave the segment out")
+		v.require(s.Diameter >= lengths.least && s.Diameter <= thread, itemOf("bolt.segments", i, "diameter", "bolt.thread"),
 			"state a diameter above 0 and not above the thread's",
-			"the segment's diameter is %g mm, the thread's %g mm", s.Diameter, b.Thread.Diameter)
+			"the segment's diameter is %s, the thread's %s", mm(s.Diameter), mm(thread))
 	}
-	v.list = ""
 }
 
 func (v *validator) ends(j Joint) {
-	if !v.require(j.Nut != nil || j.Tapped != nil, "nut", "add nut: hexagon, or tapped: {material: S355, depth: 24 mm}",
-		"neither nut nor tapped is stated") {
+	if !v.require(j.Nut != nil || j.Tapped != nil, at("nut", "tapped"),
+		"add nut: hexagon, or tapped: {material: S355, depth: 24 mm}", "neither nut nor tapped is stated") {
 		return
 	}
-	if !v.require(j.Nut == nil || j.Tapped == nil, "tapped", "keep one of them",
-		"both nut and tapped are stated") || j.Tapped == nil {
+	v.require(j.Nut == nil || j.Tapped == nil, at("tapped", "nut"), "keep one of them", "both nut and tapped are stated")
+	if j.Tapped == nil {
+		v.require(j.Nut.Height > 0 && j.Nut.BearingDiameter > 0, at("nut", "bolt.thread"), "state the nut, for example hexagon",
+			"the nut has no height or no bearing face")
 		return
 	}
-	v.require(j.NutWasher == nil, "washers.nut", "remove it", "a nut washer is stated, but there is no nut")
-	v.positive(j.Tapped.Depth, "tapped.depth", "the thread depth", "state the usable depth of the thread")
-	v.positive(j.Tapped.Material.Modulus, "tapped.material", "the modulus", "state modulus, for example 205 GPa")
-	v.positive(j.Tapped.Material.ShearStrength, "tapped.material", "the shear strength of the tapped part",
-		"state shear_strength: without it stripping cannot be judged")
+	v.require(j.NutWasher == nil || j.Nut != nil, at("washers.nut", "nut"),
+		"remove it, or state washers: {nut: none} where defaults have one", "a nut washer is stated, but there is no nut")
+	v.positive(j.Tapped.Depth, lengths, at("tapped.depth"), "the thread depth", "state the usable depth of the thread")
 }
 
-func (v *validator) parts(j Joint) {
-	v.require(len(j.Parts) > 0, "clamped", "list the clamped parts from the head down", "no clamped part is stated")
+func (v *validator) part(i int, p Part, thread float64) {
+	in := func(field string, rests ...string) place { return itemOf("clamped", i, field, rests...) }
+	v.positive(p.Thickness, lengths, in("thickness"), "the thickness", "state the part's thickness, or leave the part out")
+	if v.require(p.Hole >= thread, in("hole", "bolt.thread"), "state the clearance hole: at least the thread's diameter",
+		"the hole of %s is smaller than the thread of %s", mm(p.Hole), mm(thread)) {
+		v.require(p.OuterDiameter > p.Hole, in("outer_diameter", in("hole").path()), "state what the part offers around the bolt axis",
+			"the outer diameter of %s is not larger than the hole of %s", mm(p.OuterDiameter), mm(p.Hole))
+	}
+	v.require(p.OuterDiameter <= lengths.most, in("outer_diameter"), "state what the part offers around the bolt axis",
+		"the outer diameter is %s; it must be at most %s", mm(p.OuterDiameter), mm(lengths.most))
+}
+
+// materials requires what the checks need to know of each part.
+func (v *validator) materials(j Joint) {
+	const noStrength = "state shear_strength: without it stripping cannot be judged"
 	for i, p := range j.Parts {
-		v.list, v.index = "clamped", i
-		v.positive(p.Thickness, "thickness", "the thickness", "state the part's thickness, or leave the part out")
-		v.require(p.Hole >= j.Bolt.Thread.Diameter, "hole", "state the clearance hole: at least the thread's diameter",
-			"the hole of %g mm is smaller than the thread of %g mm", p.Hole, j.Bolt.Thread.Diameter)
-		v.require(p.OuterDiameter > p.Hole, "outer_diameter", "state what the part offers around the bolt axis",
-			"the outer diameter of %g mm is not larger than the hole of %g mm", p.OuterDiameter, p.Hole)
-		v.positive(p.Material.Modulus, "material", "the modulus", "state modulus, for example 205 GPa")
-		v.positive(p.Material.LimitingPressure, "material", "the limiting bearing pressure",
+		where := itemOf("clamped", i, "material.")
+		v.material(p.Material, where)
+		where.field += "bearing_pressure"
+		v.positive(p.Material.LimitingPressure, pressures, where, "the limiting bearing pressure",
 			"state bearing_pressure: without it the faces cannot be judged")
 	}
-	v.list = ""
-}
-
-// fit checks that bolt and parts go together.
-func (v *validator) fit(j Joint) {
-	grip, length := j.Grip(), j.Bolt.Length
-	if !v.require(length > grip, "bolt.length", "state a longer bolt, or thinner parts",
-		"the grip of %.5g mm is longer than the bolt of %g mm", grip, length) {
-		return
-	}
 	if j.Tapped != nil {
-		v.require(length-grip <= j.Tapped.Depth, "tapped.depth", "state a deeper thread or a shorter bolt",
-			"the bolt bottoms: it reaches %.5g mm into a thread of %g mm", length-grip, j.Tapped.Depth)
-	}
-	var shank float64
-	path := "bolt.shank"
-	if j.Bolt.Shank != nil {
-		shank = *j.Bolt.Shank
-	}
-	for _, s := range j.Bolt.Segments {
-		shank += s.Length
-		path = "bolt.segments"
-	}
-	v.require(shank <= grip, path, "state the part of the shank that lies inside the grip",
-		"the shank of %.5g mm is longer than the grip of %.5g mm", shank, grip)
-	v.faces(j)
-	v.cone(j)
-}
-
-// faces checks that head, nut and washers have a face to bear on.
-func (v *validator) faces(j Joint) {
-	for _, f := range j.bearingFaces() {
-		if f.outer > f.inner {
-			continue
-		}
-		part := 0
-		if strings.HasPrefix(f.name, "nut") {
-			part = len(j.Parts) - 1
-		}
-		v.require(false, fmt.Sprintf("clamped[%d].hole", part), "state a smaller hole, or a washer that spans it",
-			"the face under the %s has no area: %.5g mm outside, %.5g mm inside", f.name, f.outer, f.inner)
+		v.material(j.Tapped.Material, at("tapped.material."))
+		v.positive(j.Tapped.Material.ShearStrength, pressures, at("tapped.material.shear_strength"),
+			"the shear strength of the tapped part", noStrength)
 	}
 }
 
-// cone checks that the deformation body is wider than every hole it meets.
-func (v *validator) cone(j Joint) {
-	if len(v.faults) > 0 {
-		return
+// material requires what every material has; where is the path up to the
+// property.
+func (v *validator) material(m fastener.Material, where place) {
+	property := func(name string) place {
+		p := where
+		p.field += name
+		return p
 	}
-	cones := j.body().Cones()
-	var depth float64
-	first := 0 // layers before the first part
-	if j.HeadWasher != nil {
-		first = 1
-	}
-	for i, l := range j.layers() {
-		narrowest := math.Min(cones.Width(depth), cones.Width(depth+l.thickness))
-		depth += l.thickness
-		if narrowest > l.hole {
-			continue
-		}
-		part := min(max(i-first, 0), len(j.Parts)-1) // a washer is blamed on its neighbour
-		v.require(false, fmt.Sprintf("clamped[%d].hole", part), "state a smaller hole or a larger outer diameter",
-			"the hole of %.5g mm in %s is wider than the pressure cone, %.5g mm", l.hole, l.name, narrowest)
-	}
+	v.positive(m.Modulus, moduli, property("modulus"), "the modulus", "state modulus, for example 205 GPa")
+	const steepest = 1e-3
+	v.require(m.Expansion > -steepest && m.Expansion < steepest, property("expansion"),
+		"state expansion, for example 11.5 um/m/K",
+		"the thermal expansion is %s; no material has that", measured{m.Expansion, quantity.Expansion})
+	v.notNegative(m.TensileStrength, pressures, property("tensile_strength"), "the tensile strength")
 }
 
 func (v *validator) clamp(c Clamp) {
-	v.notNegative(c.Residual, "clamp.residual", "the residual clamp force")
-	v.notNegative(c.Transverse, "clamp.transverse", "the transverse load")
-	v.notNegative(c.Torque, "clamp.torque", "the torque about the bolt axis")
-	v.notNegative(c.SealArea, "clamp.seal.area", "the sealed area")
-	v.notNegative(c.SealPressure, "clamp.seal.pressure", "the sealed pressure")
-	v.require(c.Interfaces >= 0 && c.Interfaces <= 100, "clamp.interfaces",
-		"state how many faces carry the load, for example 1",
-		"the number of slip faces is %d", c.Interfaces)
-	v.require(c.Residual > 0 || c.slips() || c.SealArea*c.SealPressure > 0, "clamp",
-		"state residual, transverse, torque or seal",
-		"nothing says what the joint must hold")
-	if c.Torque > 0 {
-		v.positive(c.TorqueRadius, "clamp.torque_radius", "the friction radius of the torque", "state torque_radius")
+	v.notNegative(c.Residual, forces, at("clamp.residual"), "the residual clamp force")
+	v.notNegative(c.Transverse, forces, at("clamp.transverse"), "the transverse load")
+	v.notNegative(c.Torque, torques, at("clamp.torque"), "the torque about the bolt axis")
+	v.notNegative(c.SealArea, areas, at("clamp.seal.area"), "the sealed area")
+	v.notNegative(c.SealPressure, pressures, at("clamp.seal.pressure"), "the sealed pressure")
+	v.require(c.Interfaces >= 0 && c.Interfaces <= 100, at("clamp.interfaces"),
+		"state how many faces carry the load, for example 1", "the number of slip faces is %d", c.Interfaces)
+	nothing := c.Residual == 0 && c.Transverse == 0 && c.Torque == 0 && c.SealArea*c.SealPressure == 0
+	v.require(!nothing, at("clamp"), "state residual, transverse, torque or seal", "nothing says what the joint must hold")
+	v.require(c.TorqueRadius != 0 || c.Torque <= 0, at("clamp.torque_radius", "clamp.torque"), "add torque_radius: 40 mm",
+		"the torque about the bolt axis has no friction radius")
+	v.positiveOrNone(c.TorqueRadius, lengths, at("clamp.torque_radius"), "the friction radius of the torque",
+		"state it as a length, for example 40 mm")
+	if c.InterfaceFriction == 0 {
+		v.require(!c.slips(), at("clamp.interface_friction", "clamp.transverse", "clamp.torque"), "add interface_friction: 0.12",
+			"friction must carry a load, but the interface friction is not stated")
+		return
 	}
-	if c.slips() {
-		v.coefficient(c.InterfaceFriction, "clamp.interface_friction", "the interface friction")
-	}
+	v.coefficient(quantity.Single(c.InterfaceFriction), at("clamp.interface_friction"), "the interface friction",
+		"state the least one as a plain number, for example 0.12")
 }
 
-// coefficient requires a possible coefficient of friction.
-func (v *validator) coefficient(mu float64, path, what string) {
-	v.require(mu > 0 && mu <= 1, path, "state it as a plain number, for example 0.12",
-		"%s is %g; a coefficient of friction lies above 0 and not above 1", what, mu)
-}
-
-func (v *validator) loads(j Joint) {
-	l := j.Loads
-	v.require(l.Axial.IsFinite() && l.Axial.Low <= l.Axial.High, "loads.axial", "write it as 0 to 9.5 kN",
-		"the axial load is no range")
+func (v *validator) loads(l Loads) {
+	inside := l.Axial.Low >= -forces.most && l.Axial.High <= forces.most
+	v.require(inside && l.Axial.Low <= l.Axial.High, at("loads.axial"), "write it as 0 to 9.5 kN",
+		"the axial load of %s to %s is impossible", measured{l.Axial.Low, quantity.Force}, measured{l.Axial.High, quantity.Force})
 	if l.IntroductionFactor == nil {
-		v.require(l.Axial == quantity.Range{}, "loads.introduction_factor",
+		v.require(l.Axial == quantity.Range{}, at("loads.introduction_factor", "loads.axial"),
 			"state introduction_factor: 1 where the load enters at head and nut, 0.5 where it enters half way to the interface, less nearer to it",
 			"the axial load has no load introduction factor")
 	} else {
 		n := *l.IntroductionFactor
-		v.require(n >= 0 && n <= 1, "loads.introduction_factor", "state a number from 0 to 1",
+		v.require(n >= 0 && n <= 1, at("loads.introduction_factor"), "state a number from 0 to 1",
 			"the load introduction factor is %g", n)
 	}
-	v.require(l.Cycles == 0 || (l.Cycles >= 1 && !math.IsInf(l.Cycles, 0)), "loads.cycles",
+	v.require(l.Cycles == 0 || (l.Cycles >= cycleRange.least && l.Cycles <= cycleRange.most), at("loads.cycles"),
 		"state how often the axial load goes from end to end, for example 2e6",
 		"%g load cycles are impossible", l.Cycles)
 }
@@ -277,60 +195,61 @@ func (v *validator) temperature(t *Temperature) {
 		return
 	}
 	possible := func(c float64) bool { return c >= -273.15 && c <= 1000 }
-	v.require(possible(t.Assembly), "temperature.assembly", "state -273.15 to 1000 degC",
+	v.require(possible(t.Assembly), at("temperature.assembly"), "state -273.15 to 1000 degC",
 		"%g degC is impossible", t.Assembly)
-	v.require(possible(t.Service.Low) && possible(t.Service.High) && t.Service.Low <= t.Service.High, "temperature.service",
-		"state -273.15 to 1000 degC, low end first",
+	v.require(possible(t.Service.Low) && possible(t.Service.High) && t.Service.Low <= t.Service.High,
+		at("temperature.service"), "state -273.15 to 1000 degC, low end first",
 		"%g to %g degC is impossible", t.Service.Low, t.Service.High)
 }
 
 func (v *validator) friction(f Friction) {
-	v.frictionRange(f.Thread, "friction.thread", "the friction in the thread")
-	v.frictionRange(f.Head, "friction.head", "the friction under the head")
-}
-
-func (v *validator) frictionRange(r quantity.Range, path, what string) {
-	v.require(r.Low > 0 && r.High <= 1 && r.Low <= r.High, path, "write it as 0.10 to 0.14",
-		"%s is %g to %g; a coefficient of friction lies above 0 and not above 1", what, r.Low, r.High)
+	v.coefficient(f.Thread, at("friction.thread"), "the friction in the thread", "write it as 0.10 to 0.14")
+	v.coefficient(f.Head, at("friction.head"), "the friction under the head", "write it as 0.10 to 0.14")
 }
 
 func (v *validator) tightening(t Tightening) {
 	v.word(string(t.Method), "tightening.method", string(TorqueMethod), string(TorqueAndAngleMethod))
 	v.word(string(t.Scatter), "tightening.scatter", string(RangeScatter), string(GuideScatter))
 	v.word(string(t.Aim), "tightening.aim", string(AimHigh), string(AimMiddle))
-	share := func(value float64) bool { return value == 0 || (value > 0 && value < 1) }
-	v.require(t.Utilisation >= 0 && t.Utilisation <= 1, "tightening.utilisation",
-		"state a share of the yield strength above 0 and not above 1, usually 0.9",
-		"the utilisation is %g", t.Utilisation)
-	v.require(share(t.Snug), "tightening.snug", "state a share between 0 and 100 %",
-		"the snug torque is %g of the target", t.Snug)
-	v.require(t.Snug == 0 || t.SnugTorque == 0, "tightening.snug_torque", "keep one of them",
-		"both snug and snug_torque are stated")
-	v.require(share(t.ElasticSpread), "tightening.elastic_spread", "state a share between 0 and 100 %",
-		"the uncertainty of the compliances is %g", t.ElasticSpread)
-	v.notNegative(t.Step, "tightening.step", "the resolution of the setting")
-	v.notNegative(t.SnugTorque, "tightening.snug_torque", "the snug torque")
-	v.notNegative(t.AngleStep, "tightening.angle_step", "the resolution of the angle")
-	v.notNegative(t.AngleTol, "tightening.angle_tolerance", "the tolerance of the angle")
-	v.require(t.ScatterFactor == 0 || (t.ScatterFactor >= 1 && t.ScatterFactor <= 10), "tightening.scatter_factor",
-		"state alpha_A from 1 to 10, for example 1.6",
-		"the tightening factor is %g", t.ScatterFactor)
+	v.settings(t)
+	if t.Tool != nil {
+		v.require(t.Tool.Tolerance >= 0 && t.Tool.Tolerance < 0.5, at("tightening.tool.tolerance"),
+			"state a tolerance from 0 to below 50 %, for example 4 %", "the tool's tolerance is %g %%", t.Tool.Tolerance*100)
+	}
 	if t.Scatter == GuideScatter {
-		v.require(t.Method != TorqueAndAngleMethod, "tightening.scatter", "state scatter: range",
+		v.require(t.Method != TorqueAndAngleMethod, at("tightening.scatter", "tightening.method"), "state scatter: range",
 			"the guide scatter factor is for torque, not for torque and angle")
 		return
 	}
-	v.require(t.ScatterFactor == 0, "tightening.scatter_factor", "state scatter: guide, or leave the factor out",
-		"a scatter factor is stated, but the scatter comes from the ranges")
-	if v.require(t.Tool != nil, "tightening.tool", "add tool: {tolerance: 4 %}", "no tool is stated") {
-		v.require(t.Tool.Tolerance >= 0 && t.Tool.Tolerance < 0.5, "tightening.tool.tolerance",
-			"state a tolerance from 0 to below 50 %, for example 4 %",
-			"the tool's tolerance is %g", t.Tool.Tolerance)
+	if v.require(t.ScatterFactor == 0, at("tightening.scatter_factor", "tightening.scatter"),
+		"state scatter: guide, or leave the factor out", "a scatter factor is stated, but the scatter comes from the ranges") {
+		v.require(t.Tool != nil, at("tightening.tool", "tightening.scatter"), "add tightening: {tool: {tolerance: 4 %}}", "no tool is stated")
 	}
+}
+
+// settings judges the numbers of the tightening, each by itself.
+func (v *validator) settings(t Tightening) {
+	share := func(value float64) bool { return value >= 0 && value < 1 }
+	v.require(t.Utilisation == 0 || (t.Utilisation >= 0.01 && t.Utilisation <= 1), at("tightening.utilisation"),
+		"state a share of the yield strength from 0.01 to 1, usually 0.9", "the utilisation is %g", t.Utilisation)
+	v.require(share(t.Snug), at("tightening.snug"), "state a share between 0 and 100 %",
+		"the snug torque is %g %% of the target", t.Snug*100)
+	v.require(t.Snug == 0 || t.SnugTorque == 0, at("tightening.snug_torque", "tightening.snug"), "keep one of them",
+		"both snug and snug_torque are stated")
+	v.require(share(t.ElasticSpread), at("tightening.elastic_spread"), "state a share between 0 and 100 %",
+		"the uncertainty of the compliances is %g %%", t.ElasticSpread*100)
+	const leaveOut = "state a value above 0, or leave it out"
+	v.positiveOrNone(t.Step, torques, at("tightening.step"), "the resolution of the setting", leaveOut)
+	v.positiveOrNone(t.SnugTorque, torques, at("tightening.snug_torque"), "the snug torque", leaveOut)
+	turn := bounds{quantity.Angle, 0.01, 360}
+	v.positiveOrNone(t.AngleStep, turn, at("tightening.angle_step"), "the resolution of the angle", leaveOut)
+	v.notNegative(t.AngleTol, turn, at("tightening.angle_tolerance"), "the tolerance of the angle")
+	v.require(t.ScatterFactor == 0 || (t.ScatterFactor >= 1 && t.ScatterFactor <= 10), at("tightening.scatter_factor"),
+		"state alpha_A from 1 to 10, for example 1.6", "the tightening factor is %g", t.ScatterFactor)
 }
 
 // word requires one of the known words, or none.
 func (v *validator) word(word, field string, known ...string) {
-	v.require(word == "" || slices.Contains(known, word), field, "state "+known[0]+" or "+known[1],
+	v.require(word == "" || slices.Contains(known, word), at(field), "state "+known[0]+" or "+known[1],
 		"unknown word %q", word)
 }

@@ -3,6 +3,7 @@ package register
 import (
 	"fmt"
 	"runtime"
+	"slices"
 	"strconv"
 	"strings"
 	"sync"
@@ -63,20 +64,13 @@ func readSource(in Source) ([]located, []Problem) {
 			"split it into several files")
 		return nil, p.all
 	}
-	top := parse(p, headChunk)
-	if top == nil {
-		if len(p.all) == 0 {
-			p.at(position{1, 1}, "the register is empty", "begin with assembly, revision and joints")
-		}
-		return nil, p.all
-	}
-	h, whole := readHeader(&decoder{p}, top, len(chunks) > 0)
+	h, whole := readHeader(&decoder{problems: p}, parse(p, headChunk), len(chunks) > 0)
 
 	// Each joint is parsed and judged by itself, on all cores; the results keep
 	// their order.
 	results := make([]jointResult, len(chunks)+len(whole))
-	for i, n := range whole {
-		results[i] = readJoint(s, h, n, len(p.all) == 0)
+	for i, f := range whole {
+		results[i] = readJoint(s, h, f.node)
 	}
 	inParallel(len(chunks), func(i int) { results[len(whole)+i] = readChunk(s, h, chunks[i]) })
 	var found []located
@@ -88,24 +82,46 @@ func readSource(in Source) ([]located, []Problem) {
 }
 
 // readHeader reads the keys at the top. Joints that split could not cut out are
-// returned as nodes.
-func readHeader(d *decoder, top *node, cut bool) (header, []*node) {
-	o := d.object(top, "the register", "assembly", "revision", "prepared_by", "defaults", "joints")
-	h := header{revision: o.label("revision"), preparedBy: o.label("prepared_by"), defaults: o.node.get("defaults")}
-	if o.require("assembly", "the machine the joints belong to") {
-		h.assembly = o.label("assembly")
+// returned. What cannot be read of the defaults is not held against the joints.
+func readHeader(d *decoder, top *node, cut bool) (header, []field) {
+	unknown := &node{kind: mapping, partial: true}
+	if top == nil {
+		if len(d.all) == 0 {
+			d.at(position{1, 1}, "the register is empty", "begin with assembly, revision and joints")
+		}
+		return header{defaults: unknown}, nil
 	}
-	if h.defaults != nil {
-		d.object(h.defaults, "defaults", jointKeys...)
+	o := field{d, top, "the register", ""}.object("assembly", "revision", "prepared_by", "defaults", "joints")
+	h := header{revision: o.label("revision"), preparedBy: o.label("prepared_by")}
+	if o.require("assembly", "the machine the joints belong to") {
+		h.assembly = o.at("assembly").label()
+	}
+	switch {
+	case slices.Contains(d.unread, "defaults"): // most likely misspelt
+		h.defaults = unknown
+	case o.stated("defaults"):
+		h.defaults = readDefaults(o.at("defaults"))
 	}
 	if cut || !o.require("joints", "a list of joints") {
 		return h, nil
 	}
-	whole := d.list(o.node.get("joints"), "joints")
-	if len(whole) == 0 {
-		d.at(o.node.get("joints").pos, "the register has no joints", "list at least one joint under joints")
+	joints := o.at("joints")
+	whole := joints.items("joint")
+	if joints.node.kind == list && len(whole) == 0 {
+		joints.wrong("the register has no joints", "list at least one joint under joints")
 	}
 	return h, whole
+}
+
+// readDefaults returns the defaults that joints are laid over. Their unknown keys
+// are noted in the words in which each joint will note them, and so shown once.
+func readDefaults(f field) *node {
+	if !f.is(mapping, "write it as {surfaces: Rz 16 um}") {
+		return &node{kind: mapping, partial: true}
+	}
+	f.name = "the joint"
+	f.object(jointKeys...)
+	return f.node
 }
 
 // jointResult is what one chunk gives.
@@ -120,7 +136,7 @@ func readChunk(s *source, h header, c chunk) jointResult {
 	var result jointResult
 	if items != nil && items.kind == list {
 		for _, item := range items.items {
-			r := readJoint(s, h, item, len(p.all) == 0)
+			r := readJoint(s, h, item)
 			result.joints = append(result.joints, r.joints...)
 			result.problems = append(result.problems, r.problems...)
 		}
@@ -129,20 +145,19 @@ func readChunk(s *source, h header, c chunk) jointResult {
 	return result
 }
 
-// readJoint reads one joint. Its faults are judged only when it reads well and
-// its text was whole, else they would mislead.
-func readJoint(s *source, h header, own *node, whole bool) jointResult {
-	d := &decoder{&problems{source: s}}
-	if own.kind != mapping {
-		d.at(own.pos, fmt.Sprintf("a joint is %s, but a mapping belongs here", own.kind),
-			"write it as - id: A-010, with its other keys below")
+// readJoint reads one joint and judges it by the rules that rest on nothing
+// unread.
+func readJoint(s *source, h header, own *node) jointResult {
+	d := &decoder{problems: &problems{source: s}}
+	whole := field{d, own, "a joint", ""}
+	if !whole.is(mapping, "write it as - id: A-010, with its other keys below") {
 		return jointResult{problems: d.all}
 	}
 	n := merge(h.defaults, own)
 	j := d.joint(n)
 	j.Assembly, j.Revision, j.PreparedBy = h.assembly, h.revision, h.preparedBy
-	if whole && len(d.all) == 0 {
-		for _, f := range j.Faults() {
+	for _, f := range j.Faults() {
+		if d.judges(f) {
 			d.at(locate(n, f.Path), f.Message, f.Mend)
 		}
 	}

@@ -95,8 +95,8 @@ func TestOneErrorForEachMistake(t *testing.T) {
 		{"wrong unit", "residual: 12 kN", "residual: 12 KN", `16:23: residual: unknown unit "KN"`, "write kN"},
 		{"hole smaller than thread", "thickness: 18 mm, hole: 13.5 mm", "thickness: 18 mm, hole: 11 mm", `14:64: the hole of 11 mm is smaller than the thread of 12 mm`, "state the clearance hole: at least the thread's diameter"},
 		{"grip longer than bolt", "length: 60 mm", "length: 30 mm", `11:33: the grip of 33 mm is longer than the bolt of 30 mm`, "state a longer bolt, or thinner parts"},
-		{"thickness 0", "thickness: 18 mm", "thickness: 0 mm", `14:51: the thickness is 0; it must be above 0`, "state the part's thickness, or leave the part out"},
-		{"mu of 5", "thread: 0.10 to 0.14", "thread: 5", `4:22: the friction in the thread is 5 to 5; a coefficient of friction lies above 0 and not above 1`, "write it as 0.10 to 0.14"},
+		{"thickness 0", "thickness: 18 mm", "thickness: 0 mm", `14:51: the thickness is 0 mm; it must be above 0`, "state the part's thickness, or leave the part out"},
+		{"mu of 5", "thread: 0.10 to 0.14", "thread: 5", `4:22: the friction in the thread is 5; a coefficient of friction lies between 0.001 and 1`, "write it as 0.10 to 0.14"},
 		{"unknown material", "part: flange, material: S355", "part: flange, material: S335", `14:34: unknown material "S335"`, `did you mean "S235"?`},
 		{"unknown thread", "thread: M12", "thread: M11", `11:20: unknown thread "M11"`, `did you mean "M10"?`},
 		{"inch thread", "thread: M12", "thread: 1/2-13 UNC", `11:20: inch threads are not planned by this version`, "state an ISO metric thread, for example M12"},
@@ -123,7 +123,7 @@ func TestOneErrorForEachMistake(t *testing.T) {
 		{"octal", "count: 4", "count: 04", `9:12: count: "04" is not a whole number`, "write it as 8"},
 		{"fraction for count", "count: 4", "count: 4.5", `9:12: count: "4.5" is not a whole number`, "write it as 8"},
 		{"no demand", "clamp: {residual: 12 kN}", "clamp: {residual: 0 kN}", `16:13: nothing says what the joint must hold`, "state residual, transverse, torque or seal"},
-		{"no tool", "tightening: {tool: {tolerance: 4 %}}", "tightening: {}", `no tool is stated`, "add tool: {tolerance: 4 %}"},
+		{"no tool", "tightening: {tool: {tolerance: 4 %}}", "tightening: {}", `no tool is stated`, "add tightening: {tool: {tolerance: 4 %}}"},
 		{"second document", "    loads: {axial: 0 to 9.5 kN, introduction_factor: 0.5}\n", "    loads: {axial: 0 kN}\n---\nassembly: other\n", `18:1: a second document begins here`, "put each register into a file of its own"},
 	}
 	for _, c := range cases {

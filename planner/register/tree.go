@@ -20,6 +20,7 @@ type node struct {
 	text    string  // of a scalar
 	items   []*node // of a list
 	entries []entry // of a mapping, in order
+	partial bool    // of a mapping: more keys were meant than could be read
 }
 
 type entry struct {
@@ -173,6 +174,7 @@ func (t *treeBuilder) mapping(n *node, values []*ast.MappingValueNode) {
 		tk := v.Key.GetToken()
 		if _, merge := v.Key.(*ast.MergeKeyNode); merge {
 			t.problem(tk, "merge keys are not used in registers", "put common values under defaults")
+			n.partial = true
 			continue
 		}
 		key := tk.Value
@@ -204,7 +206,7 @@ func merge(defaults, own *node) *node {
 		}
 		return own
 	}
-	merged := &node{pos: own.pos, kind: mapping}
+	merged := &node{pos: own.pos, kind: mapping, partial: own.partial || defaults.partial}
 	for _, e := range own.entries {
 		e.value = merge(defaults.get(e.key), e.value)
 		merged.entries = append(merged.entries, e)

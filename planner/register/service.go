@@ -1,0 +1,109 @@
+package register
+
+import (
+	"fmt"
+	"strings"
+
+	"clampback/friction"
+	"clampback/planner"
+	"clampback/planner/quantity"
+)
+
+func readClamp(f field) planner.Clamp {
+	o := f.object("residual", "transverse", "torque", "torque_radius", "interface_friction", "interfaces", "seal")
+	c := planner.Clamp{
+		Residual:          o.one("residual", quantity.Force),
+		Transverse:        o.one("transverse", quantity.Force),
+		Torque:            o.one("torque", quantity.Torque),
+		TorqueRadius:      o.some("torque_radius", quantity.Length),
+		InterfaceFriction: o.some("interface_friction", quantity.Ratio),
+	}
+	if o.stated("interfaces") {
+		c.Interfaces = o.at("interfaces").whole()
+		if o.word("interfaces") == "0" {
+			o.at("interfaces").wrong("interfaces is 0", "state how many faces carry the load, for example 1")
+		}
+	}
+	if o.stated("seal") {
+		seal := o.at("seal").object("area", "pressure")
+		seal.require("area", "2400 mm2")
+		seal.require("pressure", "10 bar")
+		c.SealArea, c.SealPressure = seal.some("area", quantity.Area), seal.some("pressure", quantity.Pressure)
+	}
+	return c
+}
+
+func readLoads(f field) planner.Loads {
+	o := f.object("axial", "introduction_factor", "cycles")
+	l := planner.Loads{Cycles: o.some("cycles", quantity.Number)}
+	if o.require("axial", "0 to 9.5 kN") {
+		l.Axial = o.at("axial").span(quantity.Force)
+	}
+	if o.stated("introduction_factor") {
+		factor := o.at("introduction_factor").quantity(quantity.Ratio)
+		l.IntroductionFactor = &factor
+	}
+	return l
+}
+
+func readTemperature(f field) *planner.Temperature {
+	o := f.object("assembly", "service")
+	var t planner.Temperature
+	if o.require("assembly", "20 degC") {
+		t.Assembly = o.at("assembly").quantity(quantity.Temperature)
+	}
+	if o.require("service", "90 degC") {
+		t.Service = o.at("service").span(quantity.Temperature)
+	}
+	return &t
+}
+
+func readFriction(f field) planner.Friction {
+	o := f.object("thread", "head", "condition", "evidence", "lubrication")
+	state := o.label("lubrication")
+	switch {
+	case o.stated("evidence"):
+		o.at("evidence").wrong("friction from test evidence is not read by this version",
+			"state the ranges that the tests gave: {thread: 0.10 to 0.14, head: 0.09 to 0.13}")
+		f.lose()
+		return planner.Friction{}
+	case o.stated("condition") && (o.stated("thread") || o.stated("head")):
+		o.at("condition").wrong("both a condition and ranges are stated", "keep one of them")
+		f.lose()
+		return planner.Friction{}
+	case o.stated("condition"):
+		c := lookUp(o.at("condition"), friction.FindCondition)
+		if c.Name == "" {
+			f.lose()
+		}
+		return planner.Friction{Thread: c.Thread, Head: c.Head, State: state, Source: c.Name + ", " + c.Source}
+	}
+	result := planner.Friction{State: state, Source: "stated in the register"}
+	if o.require("thread", "0.10 to 0.14") {
+		result.Thread = o.at("thread").span(quantity.Ratio)
+	}
+	if o.require("head", "0.09 to 0.13") {
+		result.Head = o.at("head").span(quantity.Ratio)
+	}
+	return result
+}
+
+// readSurfaces reads "Rz 16 um".
+func readSurfaces(f field) float64 {
+	const mend = "write it as Rz 16 um"
+	text := f.text()
+	if text == "" {
+		return 0
+	}
+	rest, ok := strings.CutPrefix(text, "Rz ")
+	if !ok {
+		f.wrong(fmt.Sprintf("surfaces: %q is no roughness", text), mend)
+		return 0
+	}
+	rz, err := quantity.Parse(rest, quantity.Length)
+	f.noteQuantity(err)
+	if err == nil && rz <= 0 {
+		f.wrong(fmt.Sprintf("surfaces: Rz %g um is impossible", rz*1000), mend)
+	}
+	return rz
+}
