@@ -66,14 +66,14 @@ func (w *work) angleWindow() {
 			(w.tolerated-snugHigh)*least-t.AngleTol, "deg", arithmetic),
 	}
 	w.window.target = settingIn(w.window, (math.Max(0, w.window.low)+w.window.high)/2, t.AngleStep, t.Aim)
-	w.angleSetting = w.lineBy("ang."+string(t.Aim), "ang", "target angle from snug, 0 when there is none",
+	w.angleSetting = w.lineBy("ang."+string(t.Aim), "ang", "angle in the window before the checks, 0 when there is none",
 		w.window.target, "deg", "largest or middle setting in the window")
 	angle := w.window.target
 	if angle == 0 {
 		// Show what the most tolerable angle would give; a little where none is.
-		angle = math.Max(w.window.high, 2*t.AngleTol)
+		angle, w.checkedAt = math.Max(w.window.high, 2*t.AngleTol), AtUpperEnd
 	}
-	w.line("ang_E", "angle that the checks are made at", angle, "deg", "the target; the upper end when there is none")
+	w.line("ang_E", "angle that the checks are made at", angle, "deg", "the setting; the upper end when there is none")
 	w.angleLow = w.lineBy("ang_lo.angle", "ang_lo", "smallest angle to accept", angle-t.AngleTol, "deg", arithmetic)
 	w.angleHigh = w.lineBy("ang_hi.angle", "ang_hi", "largest angle to accept", angle+t.AngleTol, "deg", arithmetic)
 

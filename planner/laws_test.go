@@ -69,6 +69,19 @@ func TestFeasibleMeansEveryCornerHolds(t *testing.T) {
 	})
 }
 
+// An infeasible joint is never given a setting, whatever makes it infeasible.
+func TestInfeasibleGivesNoSetting(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		j := drawJoint(t)
+		if rapid.Bool().Draw(t, "bolt too short") {
+			j.Bolt.Length = j.Grip() + 1
+		}
+		p := work(t, j)
+		require.Equal(t, p.Feasible, p.Torque.Target > 0)
+		require.Equal(t, p.Feasible, p.Angle.FromSnug > 0)
+	})
+}
+
 // More friction at the same torque never gives more preload.
 func TestMoreFrictionNeverGivesMorePreload(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {

@@ -27,10 +27,22 @@ type Plan struct {
 	Trace         []Line        `json:"trace"`
 	Assumptions   []string      `json:"assumptions"`
 
+	CheckedAt   Setting           `json:"-"` // the setting that preloads and checks were worked out at
+	SnugTooHigh bool              `json:"-"` // the stated snug torque leaves nothing to tighten up to
 	Joint       Joint             `json:"-"` // what was planned, completed by the assumptions
 	Diagram     stiffness.Diagram `json:"-"` // points of the joint diagram
 	AngleWindow quantity.Range    `json:"-"` // where the angle setting may lie, deg; torque and angle only
 }
+
+// Setting says which torque or angle preloads and checks were worked out at.
+type Setting int
+
+// The settings. Where the window holds none, the others show how far it is.
+const (
+	AtTarget   Setting = iota // the setting in the window, which checks may still fail
+	AtUpperEnd                // no setting in the window: what is tolerated at most
+	AtLowerEnd                // nothing is tolerated: what would be needed
+)
 
 // Stiffness is the joint as springs.
 type Stiffness struct {
@@ -49,9 +61,8 @@ type WorkBack struct {
 	RequiredPreload       float64 `json:"required_preload_N"`        // F_Mreq
 }
 
-// Preload is the assembly preload. Lowest and Highest are what the target
-// torque gives at the ends of the ranges; of an infeasible joint without a
-// target, what the upper end of the torque window gives.
+// Preload is the assembly preload. Lowest and Highest are what the setting that was
+// checked gives at the ends of the ranges; Plan.CheckedAt says which it was.
 type Preload struct {
 	Limit         float64 `json:"limit_N"` // F_lim
 	Lowest        float64 `json:"lowest_N"`
@@ -59,18 +70,19 @@ type Preload struct {
 	ScatterFactor float64 `json:"scatter_factor"` // Highest/Lowest
 }
 
-// Torque is the torque window and the setting inside it; Target is 0 when the
-// window holds no setting. For torque and angle it is the torque to expect at
-// the end.
+// Torque is the torque window and the setting inside it. Target is 0 when the joint
+// is infeasible, for whatever reason: a setting of such a joint is never given. For
+// torque and angle it is the torque to expect at the end.
 type Torque struct {
 	WindowLow  float64 `json:"window_low_Nm"`
 	Target     float64 `json:"target_Nm"`
 	WindowHigh float64 `json:"window_high_Nm"`
 }
 
-// Angle is the angle turned from snug. For torque control Low and High are what
-// a monitor should expect; for torque and angle FromSnug is the setting, 0 when
-// the joint is infeasible, and Low and High are what to accept.
+// Angle is the angle turned from snug. For torque control Low and High are what a
+// monitor should expect; for torque and angle FromSnug is the setting, and Low and
+// High are what to accept. All are 0 when the joint is infeasible, but for the snug
+// torque from which the window of torque and angle counts.
 type Angle struct {
 	SnugTorque float64 `json:"snug_torque_Nm"`
 	FromSnug   float64 `json:"from_snug_deg"`

@@ -67,6 +67,7 @@ type work struct {
 	window        window
 	scatterFactor float64 // alpha_A of GuideScatter
 	torque        float64 // that the checks are made at
+	checkedAt     Setting
 	snug          float64
 	angleSetting  float64
 	angleLow      float64
@@ -87,6 +88,7 @@ func newWork(joint Joint) *work {
 // plan gathers the record.
 func (w *work) plan() Plan {
 	w.verdict()
+	torque, angle := w.given()
 	return Plan{
 		ID:        w.joint.ID,
 		Name:      w.joint.Name,
@@ -102,16 +104,33 @@ func (w *work) plan() Plan {
 			RequiredPreload:       w.required,
 		},
 		Preload:       Preload{Limit: w.tolerated, Lowest: w.lowest, Highest: w.highest, ScatterFactor: w.highest / w.lowest},
-		Torque:        w.torques,
-		Angle:         Angle{SnugTorque: w.snug / 1000, FromSnug: w.angleSetting, Low: w.angleLow, High: w.angleHigh},
+		Torque:        torque,
+		Angle:         angle,
 		ResidualClamp: ResidualClamp{Lowest: w.lowestClamp, Highest: w.highestClamp},
 		Checks:        w.checks,
 		Trace:         w.trace,
 		Assumptions:   w.assumptions,
+		CheckedAt:     w.checkedAt,
+		SnugTooHigh:   w.snugTooHigh(),
 		Joint:         w.joint,
 		Diagram:       w.diagram(),
 		AngleWindow:   w.angleRange(),
 	}
+}
+
+// given returns the torques and angles that the plan gives out: no setting of an
+// infeasible joint is among them.
+func (w *work) given() (Torque, Angle) {
+	torque := w.torques
+	angle := Angle{SnugTorque: w.snug / 1000, FromSnug: w.angleSetting, Low: w.angleLow, High: w.angleHigh}
+	if w.feasible() {
+		return torque, angle
+	}
+	torque.Target = 0
+	if w.joint.Tightening.Method == TorqueAndAngleMethod {
+		return torque, Angle{SnugTorque: angle.SnugTorque}
+	}
+	return torque, Angle{}
 }
 
 // diagram gathers the points the joint diagram is drawn from.

@@ -23,6 +23,11 @@ func (w *work) verdict() {
 	w.binds = append(w.binds, w.failures()...)
 }
 
+// snugTooHigh reports whether a stated snug torque leaves nothing to tighten up to.
+func (w *work) snugTooHigh() bool {
+	return w.joint.Tightening.Method == TorqueMethod && w.snug >= w.torque
+}
+
 // emptyWindow says why no setting lies in the window.
 func (w *work) emptyWindow() string {
 	t := w.joint.Tightening
@@ -63,7 +68,7 @@ func (w *work) failures() []string {
 		}
 		all = append(all, fmt.Sprintf("%s: %s %s %s %s %s", c.Name, plain(c.Value), c.Unit, verb, plain(c.Limit), c.Unit))
 	}
-	if w.joint.Tightening.Method == TorqueMethod && w.snug >= w.torque {
+	if w.snugTooHigh() {
 		all = append(all, fmt.Sprintf("snug torque: %.4g N.m is not below the target torque %.4g N.m", w.snug/1000,
 			w.torque/1000))
 	}

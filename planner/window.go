@@ -24,17 +24,17 @@ func (w *work) torqueWindow() {
 		w.window = w.rangeWindow()
 	}
 	w.window.target = settingIn(w.window, math.Sqrt(w.window.low*w.window.high), t.Step, t.Aim)
-	w.lineBy("T_A."+string(t.Aim), "T_A", "target torque, 0 when there is none", w.window.target/1000, "N.m",
+	w.lineBy("T_A."+string(t.Aim), "T_A", "setting in the window before the checks, 0 when there is none", w.window.target/1000, "N.m",
 		"largest or middle setting in the window")
 
 	torque := w.window.target
 	if torque == 0 {
-		torque = w.window.high // show what the most tolerable torque would give
+		torque, w.checkedAt = w.window.high, AtUpperEnd
 	}
 	if torque == 0 {
-		torque = w.window.low // nothing is tolerated: show what would be needed
+		torque, w.checkedAt = w.window.low, AtLowerEnd
 	}
-	w.line("T_E", "torque that the checks are made at", torque/1000, "N.m", "the target; the upper end when there is none")
+	w.line("T_E", "torque that the checks are made at", torque/1000, "N.m", "the setting; an end of the window when there is none")
 	w.torque = torque
 	w.torques = Torque{WindowLow: w.window.low / 1000, Target: w.window.target / 1000, WindowHigh: w.window.high / 1000}
 	if t.Scatter == GuideScatter {

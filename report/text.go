@@ -122,10 +122,9 @@ func (t *text) force(name string, newton float64) {
 
 func (t *text) setting(p planner.Plan) {
 	q := p.Torque
-	at := "at the target"
-	if !p.Feasible {
-		at = "at the upper end"
-	}
+	at := map[planner.Setting]string{
+		planner.AtTarget: "at the setting", planner.AtUpperEnd: "at the upper end", planner.AtLowerEnd: "at the lower end",
+	}[p.CheckedAt]
 	t.printf("\n  Setting\n")
 	if p.Joint.Tightening.Method == planner.TorqueAndAngleMethod {
 		t.angleSetting(p)

@@ -282,13 +282,16 @@ func TestEveryPhraseIsUsed(t *testing.T) {
 
 // An infeasible joint without a failing check still says why.
 func TestForbiddingPageNamesAReason(t *testing.T) {
-	p := byID(t, "TRN-010")
-	p.Feasible, p.Angle.SnugTorque = false, p.Torque.Target
-	assert.Contains(t, squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0]),
-		"The first pass would already reach the final torque.")
-	p.Angle.SnugTorque = 0
-	assert.Contains(t, squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0]),
-		"Joint engineering knows why.")
+	j := byID(t, "TRN-010").Joint
+	j.Tightening.Snug, j.Tightening.SnugTorque = 0, 150000
+	p, err := planner.Work(j)
+	require.NoError(t, err)
+	require.False(t, p.Feasible)
+	page := squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0])
+	assert.Contains(t, page, "The first pass would already reach the final torque.")
+	p.SnugTooHigh = false
+	page = squeeze(pages(t, write(t, p, card.Options{ShowInfeasible: true}))[0])
+	assert.Contains(t, page, "Joint engineering knows why.")
 }
 
 // Target: 1,000 A5 cards in documents of 100 to 500 in under 2 s.

@@ -30,8 +30,7 @@ func (d *document) forbidden(p planner.Plan) []block {
 // reasons names what fails, without numbers.
 func (d *document) reasons(p planner.Plan) []item {
 	var texts []string
-	none := p.Torque.Target == 0 || (isAngle(p) && p.Angle.FromSnug == 0)
-	if none {
+	if p.CheckedAt != planner.AtTarget {
 		texts = append(texts, d.words.say("forbid_window"))
 	}
 	for _, c := range p.Checks {
@@ -39,7 +38,7 @@ func (d *document) reasons(p planner.Plan) []item {
 			texts = append(texts, d.words.say("forbid_check", "check", c.Name))
 		}
 	}
-	if !none && !isAngle(p) && p.Angle.SnugTorque >= p.Torque.Target {
+	if p.SnugTooHigh {
 		texts = append(texts, d.words.say("forbid_snug"))
 	}
 	if len(texts) == 0 {
