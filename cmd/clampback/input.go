@@ -54,6 +54,9 @@ func openSource(stdin io.Reader, name string) (register.Source, error) {
 func planEach(c *cobra.Command, joints []planner.Joint) iter.Seq2[planner.Plan, error] {
 	return func(yield func(planner.Plan, error) bool) {
 		bar := newProgress(c.ErrOrStderr(), len(joints), "planning")
+		if isTerminal(c.OutOrStdout()) && c.Name() == "plan" {
+			bar.out = nil // the results themselves move on the screen
+		}
 		defer bar.done()
 		for _, joint := range joints {
 			plan, err := planner.Work(joint)

@@ -75,6 +75,36 @@ func TestInterruptLeavesNothing(t *testing.T) {
 	assert.NoDirExists(t, dir)
 }
 
+// A Commit that fails half way puts the old files back and takes new ones away.
+func TestFailedCommitRestores(t *testing.T) {
+	dir := t.TempDir()
+	require.NoError(t, os.WriteFile(filepath.Join(dir, "a"), []byte("old a"), 0o600))
+	require.NoError(t, os.WriteFile(filepath.Join(dir, "stale"), []byte("old stale"), 0o600))
+	b, err := newBatch(t.Context(), dir)
+	require.NoError(t, err)
+	for _, name := range []string{"a", "b", "c"} {
+		require.NoError(t, b.Write(name, put("new "+name)))
+	}
+	require.True(t, b.Remove("stale"))
+	require.NoError(t, os.Remove(b.staged("c"))) // lost, as by a failing disk
+	require.Error(t, b.Commit())
+	b.Close()
+	assert.Equal(t, []string{"a", "stale"}, files(t, dir))
+	for name, want := range map[string]string{"a": "old a", "stale": "old stale"} {
+		content, err := os.ReadFile(filepath.Join(dir, name))
+		require.NoError(t, err)
+		assert.Equal(t, want, string(content))
+	}
+}
+
+func TestFoldersMadeForNothingGo(t *testing.T) {
+	dir := t.TempDir()
+	b, err := newBatch(t.Context(), filepath.Join(dir, "p", "q", "r"))
+	require.NoError(t, err)
+	b.Close()
+	assert.Empty(t, files(t, dir))
+}
+
 func TestCommittedFilesArePlain(t *testing.T) {
 	dir := t.TempDir()
 	require.NoError(t, writeFile(t.Context(), filepath.Join(dir, "a"), nil, put("a")))
