@@ -54,6 +54,7 @@ func (w *work) assume() {
 			"tolerance of the angle not stated: +/-2 deg (common practice, no source)")
 	}
 	take(j.Roughness == 0, &j.Roughness, usualRoughness, "surface roughness not stated: Rz 10 to 40 um for embedding")
+	w.assumeSafety()
 	w.assumeLoads()
 	w.assumeShank()
 	w.assumeMethod()
@@ -108,7 +109,7 @@ func (w *work) assumeMethod() {
 		w.assumed("lubrication not stated: the friction range holds only for the state it was found with")
 	}
 	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
-	w.assumed("moduli and strengths are those at room temperature")
+	w.assumeHeat()
 	if j.Nut != nil {
 		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
@@ -117,5 +118,51 @@ func (w *work) assumeMethod() {
 	}
 	if j.Tightening.Scatter == GuideScatter {
 		w.assumed("guide scatter: the tightening factor holds friction and tool together; only the least friction sets the torque, and a stated tool tolerance is not counted again")
+	}
+}
+
+// assumeSafety takes 1 for the factors that are not stated. The guideline leaves them
+// to the user and recommends more for some.
+func (w *work) assumeSafety() {
+	w.stated = w.joint.Safety
+	s := &w.joint.Safety
+	recommended := func(factor *float64, of string) {
+		if *factor == 0 {
+			w.assumed("safety factor " + of)
+		}
+	}
+	if w.slips() {
+		recommended(&s.Slip, "against slip not stated: 1 (VDI 2230-1 recommends 1.2, 1.8 for alternating loads)")
+		recommended(&s.Shear, "against shear after slip not stated: 1 (VDI 2230-1 recommends 1.1)")
+	}
+	if w.joint.Loads.Cycles > 0 {
+		recommended(&s.Fatigue, "against fatigue not stated: 1 (VDI 2230-1 recommends 1.2)")
+	}
+	recommended(&s.Yield, "against yield in service, bearing pressure and stripping: 1 where not stated (VDI 2230-1: 1.0)")
+	for _, factor := range []*float64{&s.Slip, &s.Yield, &s.Fatigue, &s.Pressure, &s.Stripping, &s.Shear} {
+		if *factor == 0 {
+			*factor = 1
+		}
+	}
+}
+
+// assumeHeat says what the heat is taken to do to moduli and strengths.
+func (w *work) assumeHeat() {
+	t := w.joint.Temperature
+	highest, lowest := math.Inf(-1), math.Inf(1)
+	for _, s := range t.states() {
+		highest = math.Max(highest, math.Max(s.Bolt, s.Parts))
+		lowest = math.Min(lowest, math.Min(s.Bolt, s.Parts))
+	}
+	switch {
+	case t.softens():
+		w.assumed("moduli above 100 degC from the tables or as stated; limiting bearing pressure and thread strength as at room temperature")
+	case highest > roomTemperature:
+		w.assumed("moduli and limiting bearing pressure as at room temperature (up to 100 degC moduli fall by some 3 %)")
+	default:
+		w.assumed("moduli and strengths are those at room temperature")
+	}
+	if lowest < roomTemperature-40 {
+		w.assumed("toughness in the cold is not judged: properties below 20 degC are taken as at 20 degC")
 	}
 }

@@ -16,11 +16,15 @@ func (w *work) demand() {
 	w.input("A_D", "area sealed by one bolt", c.SealArea, "mm2", stated)
 	w.input("p_D", "pressure to seal", c.SealPressure, "MPa", stated)
 
-	grip := w.line("F_KQ", "clamp force for friction grip", c.frictionGrip(), "N", guideline+"R2")
+	w.safety("S_G", "least safety factor against slip", w.stated.Slip)
+	grip := w.line("F_KQ", "clamp force for friction grip", w.joint.Safety.Slip*c.frictionGrip(), "N", guideline+"R2")
 	seal := w.line("F_KP", "clamp force for sealing", c.SealArea*c.SealPressure, "N", guideline+"R2")
 	w.residualClamp = w.line("F_Kerf", "required residual clamp force",
 		math.Max(c.Residual, math.Max(grip, seal)), "N", guideline+"R2")
 }
+
+// slips reports whether friction must carry a load.
+func (w *work) slips() bool { return w.joint.Clamp.slips() }
 
 // frictionGrip returns F_KQ = F_Q/(q_F mu_T) + M_Y/(q_M r_a mu_T), N.
 func (c Clamp) frictionGrip() float64 {

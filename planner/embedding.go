@@ -7,7 +7,7 @@ import (
 	"clampback/planner/table"
 )
 
-//go:embed embedding.csv
+//go:embed *.csv
 var tables embed.FS
 
 // embeddingGuide is one row of the guideline's Table 5: the embedding of each

@@ -87,8 +87,7 @@ func drawJoint(t *rapid.T) planner.Joint {
 		j.Clamp.Transverse, j.Clamp.InterfaceFriction, j.Clamp.Interfaces = 500, 0.15, 1
 	}
 	*j.Loads.IntroductionFactor = rapid.Float64Range(0, 1).Draw(t, "n")
-	j.Temperature = &planner.Temperature{Assembly: 20,
-		Service: quantity.Single(rapid.Float64Range(-200, 600).Draw(t, "service"))}
+	drawService(t, &j)
 	j.Friction.Thread = drawRange(t, "thread friction")
 	j.Friction.Head = drawRange(t, "head friction")
 	j.Tightening.Tool.Tolerance = rapid.Float64Range(0, 0.2).Draw(t, "tolerance")
@@ -100,6 +99,30 @@ func drawJoint(t *rapid.T) planner.Joint {
 		j.Tightening.Method = planner.TorqueAndAngleMethod
 	}
 	return j
+}
+
+// drawService draws temperatures, losses and safety factors.
+func drawService(t *rapid.T, j *planner.Joint) {
+	temperature := func(name string) float64 { return rapid.Float64Range(-200, 300).Draw(t, name) }
+	j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(temperature("service"))}
+	if rapid.Bool().Draw(t, "states") {
+		j.Temperature.States = []planner.ThermalState{
+			{Name: "start-up", Bolt: temperature("bolt 1"), Parts: temperature("parts 1")},
+			{Name: "running", Bolt: temperature("bolt 2"), Parts: temperature("parts 2")},
+		}
+	}
+	if rapid.Bool().Draw(t, "losses") {
+		j.Losses = planner.Losses{
+			Settlement: rapid.Float64Range(0.001, 0.02).Draw(t, "settlement"), SettlementSource: "measured",
+			Layers:     []planner.Closing{{Name: "paint", Amount: rapid.Float64Range(0.001, 0.02).Draw(t, "paint"), Source: "measured"}},
+			Relaxation: rapid.Float64Range(0, 0.3).Draw(t, "relaxation"), RelaxationSource: "measured",
+		}
+	}
+	if rapid.Bool().Draw(t, "safety") {
+		factor := func(name string) float64 { return rapid.Float64Range(1, 2).Draw(t, name) }
+		j.Safety = planner.Safety{Slip: factor("S_G"), Yield: factor("S_F"), Fatigue: factor("S_D"),
+			Pressure: factor("S_P"), Stripping: factor("S_M"), Shear: factor("S_A")}
+	}
 }
 
 // drawSize draws a number that is usually plain and now and then far too large

@@ -59,6 +59,9 @@ type layer struct {
 	modulus   float64
 	expansion float64
 	source    string
+
+	material   string  // its name
+	hotModulus float64 // stated, MPa; 0: from the tables
 }
 
 // layers returns what is clamped, from the head down.
@@ -68,7 +71,8 @@ func (j Joint) layers() []layer {
 		all = append(all, washerLayer("head washer", *j.HeadWasher))
 	}
 	for _, p := range j.Parts {
-		all = append(all, layer{p.Name, p.Thickness, p.Hole, p.Material.Modulus, p.Material.Expansion, p.Material.Source})
+		all = append(all, layer{p.Name, p.Thickness, p.Hole, p.Material.Modulus, p.Material.Expansion,
+			p.Material.Source, p.Material.Name, p.HotModulus})
 	}
 	if j.NutWasher != nil {
 		all = append(all, washerLayer("nut washer", *j.NutWasher))
@@ -77,7 +81,7 @@ func (j Joint) layers() []layer {
 }
 
 func washerLayer(name string, w fastener.Washer) layer {
-	return layer{name, w.Thickness, w.InnerDiameter, w.Modulus, w.Expansion, w.Source}
+	return layer{name, w.Thickness, w.InnerDiameter, w.Modulus, w.Expansion, w.Source, "steel washer", 0}
 }
 
 // face is a bearing face that the preload presses on.

@@ -31,7 +31,9 @@ type Joint struct {
 	Roughness float64 // Rz of the surfaces, mm; 0: not stated
 
 	Clamp       Clamp
+	Safety      Safety
 	Loads       Loads
+	Losses      Losses
 	Temperature *Temperature // nil: service at assembly temperature
 	Friction    Friction
 	Tightening  Tightening
@@ -45,6 +47,9 @@ type Bolt struct {
 	Length   float64   // l, mm, from under the head to the end
 	Shank    *float64  // full-diameter length inside the grip, mm; nil: not stated
 	Segments []Segment // pieces of shank inside the grip, from the head down; instead of Shank
+
+	HotModulus float64 // E_S at its highest temperature in service, MPa; 0: from the tables
+	HotYield   float64 // R_p0.2 at its highest temperature in service, MPa; 0: from the tables
 }
 
 // Segment is one cylindrical piece of a bolt's shank.
@@ -59,6 +64,7 @@ type Part struct {
 	Material      fastener.Material
 	Thickness     float64 // mm
 	Hole          float64 // d_h, mm
+	HotModulus    float64 // E at its highest temperature in service, MPa; 0: from the tables
 	OuterDiameter float64 // D_A, mm: what the part offers around the bolt axis
 }
 
@@ -89,10 +95,48 @@ type Loads struct {
 	Cycles             float64        // load cycles between the ends of Axial; 0: static
 }
 
-// Temperature is the temperature of the whole joint.
+// Safety is the least safety factors that are demanded beyond the method's own
+// margins; 0: not stated.
+type Safety struct {
+	Slip      float64 // S_G, on the load that friction carries
+	Yield     float64 // S_F, on the yield strength in service
+	Fatigue   float64 // S_D, on the stress amplitude
+	Pressure  float64 // S_P, on the limiting bearing pressure
+	Stripping float64 // S_M, on the force that strips a thread
+	Shear     float64 // S_A, on shear of the bolt and pressure of the hole after slip
+}
+
+// Losses is what the clamp loses in service besides the temperature, where the
+// guide values of embedding do not say it all.
+type Losses struct {
+	Settlement       float64   // measured closing of all faces together, mm, in place of the guide values; 0: not stated
+	SettlementSource string    // where it was measured
+	Layers           []Closing // what closes on top: gasket, paint, coating
+	Relaxation       float64   // share of the preload lost over time; 0: not stated
+	RelaxationSource string
+}
+
+// Closing is a layer that gets thinner in service.
+type Closing struct {
+	Name   string
+	Amount float64 // mm
+	Source string
+}
+
+// Temperature is the temperature of the joint: one Service range that bolt and
+// parts share, or States in which they differ.
 type Temperature struct {
 	Assembly float64        // degC
-	Service  quantity.Range // degC
+	Service  quantity.Range // degC; without States
+	States   []ThermalState
+}
+
+// ThermalState is one state of service: the bolt at one temperature, the parts at
+// another.
+type ThermalState struct {
+	Name  string
+	Bolt  float64 // degC
+	Parts float64 // degC
 }
 
 // Friction is the range of the coefficients of friction.

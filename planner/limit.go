@@ -21,7 +21,9 @@ func (w *work) limit() {
 	rule := "F_lim"
 	if w.joint.Tapped != nil {
 		w.stripping()
-		force := w.line("F_thr", "preload that the tapped thread tolerates", math.Max(0, w.strip-extra), "N", guideline+"R11")
+		w.safety("S_M", "least safety factor of the thread against stripping", w.stated.Stripping)
+		force := w.line("F_thr", "preload that the tapped thread tolerates",
+			math.Max(0, w.strip/w.joint.Safety.Stripping-extra), "N", guideline+"R11")
 		bounds = append(bounds, bound{"thread stripping", force})
 		rule = "F_lim.tapped"
 	} else {
@@ -64,26 +66,33 @@ func (w *work) assemblyBound() bound {
 }
 
 // remainingTorsion is k_tau, the share of the assembly torsion that stays in
-// the bolt in service. VDI 2230-1:2015 R8.
-const remainingTorsion = 0.5
+// the bolt in service; elasticTorsion is what the torsional stress is larger by
+// with the elastic section modulus pi d_0^3/16, which R8 takes, than with the
+// plastic one of R7, pi d_0^3/12. VDI 2230-1:2015 R8, from memory.
+const (
+	remainingTorsion = 0.5
+	elasticTorsion   = 4.0 / 3
+)
 
 func (w *work) workingBound(extra float64) bound {
-	yieldForce := w.joint.Bolt.Class.YieldStrength * w.thread.weakestArea
+	w.safety("S_F", "least safety factor of the yield strength in service", w.stated.Yield)
+	yieldForce := w.hotYield / w.joint.Safety.Yield * w.thread.weakestArea
 	w.input("k_tau", "share of the torsion that remains in service", remainingTorsion, "-", guideline+"R8")
 	force := w.line("F_work", "preload that the bolt tolerates in service",
-		workingPreload(yieldForce, extra, remainingTorsion*w.torsion), "N", guideline+"R8")
+		workingPreload(yieldForce, extra, remainingTorsion*elasticTorsion*w.torsion), "N", guideline+"R8")
 	return bound{"working stress", force}
 }
 
 func (w *work) bearingBounds(extra float64) []bound {
 	bounds := make([]bound, 0, len(w.faces))
+	w.safety("S_P", "least safety factor of the bearing pressure", w.stated.Pressure)
 	for i, f := range w.faces {
 		w.inputAt(i+1, "D_out", "outer diameter of the face under the "+f.name, f.outer, "mm", guideline+"R10")
 		w.inputAt(i+1, "d_in", "inner diameter of the face under the "+f.name, f.inner, "mm", stated)
 		w.inputAt(i+1, "p_G", "limiting bearing pressure under the "+f.name, f.pressure, "MPa", f.source)
 		area := w.lineAt(i+1, "A_p", "bearing area under the "+f.name, f.area(), "mm2", guideline+"R10")
 		force := w.lineAt(i+1, "F_p", "preload that the face under the "+f.name+" tolerates",
-			math.Max(0, f.pressure*area-extra), "N", guideline+"R10")
+			math.Max(0, f.pressure/w.joint.Safety.Pressure*area-extra), "N", guideline+"R10")
 		bounds = append(bounds, bound{"bearing pressure under the " + f.name, force})
 	}
 	return bounds

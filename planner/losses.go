@@ -1,21 +1,35 @@
 package planner
 
-import (
-	"math"
-)
+import "math"
 
-// losses works out what the assembly preload loses, or gains, before the load
-// comes: embedding and temperature.
+// losses works out what the preload loses between assembly and service:
+// embedding, closing layers and temperature. What grows with the preload itself,
+// softening and relaxation, comes with the requirement.
 func (w *work) losses() {
 	w.embed()
+	w.close()
 	w.heat()
 }
 
-// embed works out the loss by embedding, F_Z. A joint with a transverse load
-// embeds as in shear, the larger guide value.
+// embed works out the loss by embedding, F_Z: from the guide values, or from a
+// measured closing. A joint with a transverse load embeds as in shear, the larger
+// guide value.
 func (w *work) embed() {
+	var total float64
+	if settlement := w.joint.Losses.Settlement; settlement > 0 {
+		total = settlement * 1000
+		w.input("fz_sum", "embedding, measured", total, "um", w.joint.Losses.SettlementSource)
+	} else {
+		total = w.guideEmbedding()
+	}
+	w.embedding = w.line("F_Z", "preload lost by embedding",
+		total/1000/(w.boltCompliance+w.clampedCompliance), "N", guideline+"R4")
+}
+
+// guideEmbedding adds up the guide values, um.
+func (w *work) guideEmbedding() float64 {
 	load := "axial"
-	if w.joint.Clamp.slips() {
+	if w.slips() {
 		load = "shear"
 	}
 	guide := findEmbedding(load, w.joint.Roughness)
@@ -33,35 +47,23 @@ func (w *work) embed() {
 	w.input("fz_I", "embedding at an inner interface", guide.innerInterface, "um", source)
 	w.input("n_B", "number of bearing faces", float64(faces), "-", "counted")
 	w.input("n_I", "number of inner interfaces", float64(inner), "-", "counted")
-
 	total := guide.thread + float64(faces)*guide.bearingFace + float64(inner)*guide.innerInterface
-	w.line("fz_sum", "embedding", total, "um", guideline+"Table 5")
-	w.embedding = w.line("F_Z", "preload lost by embedding",
-		total/1000/(w.boltCompliance+w.clampedCompliance), "N", guideline+"R4")
+	return w.line("fz_sum", "embedding", total, "um", guideline+"Table 5")
 }
 
-// heat works out what a change of temperature does to the preload. A range of
-// service temperatures may bring a loss at one end and a gain at the other:
-// only a loss raises the requirement, a gain raises the highest bolt force.
-func (w *work) heat() {
-	j := w.joint
-	bolt := j.Bolt.Class
-	t := j.Temperature
-	w.input("alpha_S", "expansion of the bolt", bolt.Expansion, "1/K", bolt.Source)
-	var excess float64 // growth of the bolt over the parts, mm/K
-	for i, l := range j.layers() {
-		w.inputAt(i+1, "alpha_P", "expansion of "+l.name, l.expansion, "1/K", l.source)
-		excess += (bolt.Expansion - l.expansion) * l.thickness
+// close works out the loss by layers that get thinner in service: gasket, paint,
+// coating, F_L.
+func (w *work) close() {
+	layers := w.joint.Losses.Layers
+	if len(layers) == 0 {
+		return
 	}
-	w.input("temp_M", "temperature at assembly", t.Assembly, "degC", stated)
-	w.input("temp_lo", "lowest temperature in service", t.Service.Low, "degC", stated)
-	w.input("temp_hi", "highest temperature in service", t.Service.High, "degC", stated)
-
-	perDegree := w.line("dF_K", "preload lost per degree of warming",
-		excess/(w.boltCompliance+w.clampedCompliance), "N/K", guideline+"R4")
-	low, high := perDegree*(t.Service.Low-t.Assembly), perDegree*(t.Service.High-t.Assembly)
-	w.thermalLoss = w.line("dF_Vth", "preload lost by temperature", math.Max(0, math.Max(low, high)), "N", guideline+"R4")
-	w.thermalGain = w.line("dF_gain", "preload gained by temperature", math.Max(0, math.Max(-low, -high)), "N",
+	var total float64
+	for i, l := range layers {
+		w.inputAt(i+1, "fz_L", "closing of "+l.Name, l.Amount*1000, "um", l.Source)
+		total += l.Amount
+	}
+	w.closing = w.line("F_L", "preload lost by closing layers", total/(w.boltCompliance+w.clampedCompliance), "N",
 		guideline+"R4")
 }
 
@@ -77,6 +79,55 @@ func (w *work) requirement() {
 		(1-w.loadFactor)*tension, "N", guideline+"R3")
 	w.boltShare = w.line("F_SA", "share of the load that the bolt carries",
 		w.loadFactor*tension, "N", guideline+"R3")
-	w.required = w.line("F_Mreq", "required assembly preload",
-		w.residualClamp+w.relief+w.embedding+w.thermalLoss, "N", guideline+"R5")
+	w.soften()
+	w.relax()
+	w.required = w.line("F_Mreq", "required assembly preload", w.beforeRelaxation()+w.relaxation, "N", guideline+"R5")
 }
+
+// soften works out what the fall of the moduli takes at the required preload: the
+// bolt and the parts give more in the heat, so a share of the preload is lost.
+func (w *work) soften() {
+	if len(w.hot) == 0 {
+		return
+	}
+	cold := w.residualClamp + w.relief + w.thermalLoss
+	most := cold
+	for k, s := range w.hot {
+		need := w.lineAt(k+1, "F_hot", "clamp force to set out from, "+s.name,
+			(w.residualClamp+w.relief+math.Max(0, s.loss))/s.rest, "N", guideline+"R4")
+		most = math.Max(most, need)
+	}
+	w.softening = w.line("F_soft", "preload lost by the fall of the moduli", most-cold, "N", guideline+"R4")
+}
+
+// relax works out what relaxation takes, a stated share of the preload.
+func (w *work) relax() {
+	share := w.joint.Losses.Relaxation
+	if share == 0 {
+		return
+	}
+	w.input("rho_rel", "share of the preload lost over time", share, "-", w.joint.Losses.RelaxationSource)
+	w.relaxation = w.line("F_rel", "preload lost by relaxation", share/(1-share)*w.beforeRelaxation(), "N", arithmetic)
+}
+
+func (w *work) beforeRelaxation() float64 {
+	return w.residualClamp + w.relief + w.embedding + w.closing + w.thermalLoss + w.softening
+}
+
+// leastClamp returns the clamp force that a preload leaves in the worst state of
+// service, with the load on. N.
+func (w *work) leastClamp(preload float64) float64 {
+	rest := preload*(1-w.joint.Losses.Relaxation) - w.embedding - w.closing
+	if len(w.hot) == 0 {
+		return w.line("F_KR_min", lowestClampMeaning, rest-w.thermalLoss-w.relief, "N", guideline+"R12")
+	}
+	least := rest - w.relief // still at the temperature of assembly
+	for k, s := range w.hot {
+		left := w.lineAt(k+1, "F_KR_T", "lowest residual clamp force, "+s.name,
+			rest*s.rest-math.Max(0, s.loss)-w.relief, "N", guideline+"R12")
+		least = math.Min(least, left)
+	}
+	return w.lineBy("F_KR_min.state", "F_KR_min", lowestClampMeaning, least, "N", guideline+"R12")
+}
+
+const lowestClampMeaning = "lowest residual clamp force in service"

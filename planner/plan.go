@@ -57,7 +57,10 @@ type WorkBack struct {
 	RequiredResidualClamp float64 `json:"required_residual_clamp_N"` // F_Kerf
 	LoadRelief            float64 `json:"load_relief_N"`             // (1 - Phi) F_Amax
 	EmbeddingLoss         float64 `json:"embedding_loss_N"`          // F_Z
+	ClosingLoss           float64 `json:"closing_loss_N"`            // F_L, by layers that get thinner
 	ThermalLoss           float64 `json:"thermal_loss_N"`            // dF_Vth, a loss only
+	SofteningLoss         float64 `json:"softening_loss_N"`          // F_soft, by the fall of the moduli
+	RelaxationLoss        float64 `json:"relaxation_loss_N"`         // F_rel, over time
 	RequiredPreload       float64 `json:"required_preload_N"`        // F_Mreq
 }
 

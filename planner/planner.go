@@ -37,6 +37,7 @@ func Work(joint Joint) (Plan, error) {
 // MPa, torques N.mm, angles deg; only the trace and the plan speak N.m.
 type work struct {
 	joint       Joint
+	stated      Safety // the factors that the register states; joint has them completed
 	trace       []Line
 	assumptions []string
 	checks      []Check
@@ -49,12 +50,18 @@ type work struct {
 
 	boltCompliance    float64 // delta_S
 	clampedCompliance float64 // delta_P
+	layerCompliances  []float64
 	loadFactor        float64 // Phi
 
 	residualClamp float64 // F_Kerf
 	relief        float64 // (1 - Phi) F_Amax, taken from the clamp
 	boltShare     float64 // Phi F_Amax, added to the bolt
 	embedding     float64 // F_Z
+	closing       float64 // F_L, by layers that get thinner
+	softening     float64 // F_soft, by the fall of the moduli
+	relaxation    float64 // F_rel, over time
+	hot           []hotState
+	hotYield      float64 // R_p0.2 in service, MPa
 	thermalLoss   float64 // dF_Vth where it is a loss
 	thermalGain   float64 // dF_Vth where it is a gain
 	required      float64 // F_Mreq
@@ -100,7 +107,10 @@ func (w *work) plan() Plan {
 			RequiredResidualClamp: w.residualClamp,
 			LoadRelief:            w.relief,
 			EmbeddingLoss:         w.embedding,
+			ClosingLoss:           w.closing,
 			ThermalLoss:           w.thermalLoss,
+			SofteningLoss:         w.softening,
+			RelaxationLoss:        w.relaxation,
 			RequiredPreload:       w.required,
 		},
 		Preload:       Preload{Limit: w.tolerated, Lowest: w.lowest, Highest: w.highest, ScatterFactor: w.highest / w.lowest},
@@ -139,7 +149,7 @@ func (w *work) diagram() stiffness.Diagram {
 		BoltCompliance:    w.boltCompliance,
 		ClampedCompliance: w.clampedCompliance,
 		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
-		Loss:              w.embedding + w.thermalLoss,
+		Loss:              w.lowest - w.lowestClamp - w.relief,
 		Axial:             w.joint.Loads.Axial,
 		LoadFactor:        w.loadFactor,
 		BoltShare:         w.boltShare,

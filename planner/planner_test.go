@@ -68,7 +68,7 @@ func TestWorkingStressAtItsLimit(t *testing.T) {
 	p := work(t, j)
 	force, added, ratio := line(t, p, "F_work"), line(t, p, "F_add"), line(t, p, "r_T")
 	area := line(t, p, "A_0")
-	tension, torsion := (force+added)/area, 0.5*ratio*force/area
+	tension, torsion := (force+added)/area, 0.5*ratio*4/3*force/area // elastic section modulus in service
 	assert.InEpsilon(t, 940*940, tension*tension+3*torsion*torsion, 1e-12)
 }
 
@@ -94,9 +94,9 @@ func TestTemperature(t *testing.T) {
 		j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(service)}
 		return work(t, j)
 	}
-	hot, cold, same := at(120), at(-80), at(20)
+	hot, cold, same := at(100), at(-60), at(20)
 	assert.Zero(t, same.WorkBack.ThermalLoss)
-	elongation := 33.0 * 1.5e-6 * 100 // mm; the washers are steel like the bolt
+	elongation := 33.0 * 1.5e-6 * 80 // mm; the washers are steel like the bolt
 	compliance := same.Stiffness.BoltCompliance + same.Stiffness.ClampedCompliance
 	assert.InEpsilon(t, elongation/compliance, hot.WorkBack.ThermalLoss, 1e-9)
 	assert.Zero(t, cold.WorkBack.ThermalLoss)

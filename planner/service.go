@@ -6,8 +6,7 @@ import "math"
 // most remains at the highest preload with no load, or under compression.
 func (w *work) residual() {
 	axial := w.joint.Loads.Axial
-	w.lowestClamp = w.line("F_KR_min", "lowest residual clamp force in service",
-		w.lowest-w.embedding-w.thermalLoss-w.relief, "N", guideline+"R12")
+	w.lowestClamp = w.leastClamp(w.lowest)
 	w.highestClamp = w.line("F_KR_max", "highest residual clamp force in service",
 		w.highest-w.embedding+w.thermalGain+(1-w.loadFactor)*math.Max(-axial.Low, 0), "N", guideline+"R12")
 }
@@ -69,8 +68,8 @@ func (w *work) checkStress() {
 
 	w.largest = w.line("F_Smax", "largest bolt force in service", w.highest+w.boltShare+w.thermalGain, "N", guideline+"R8")
 	working := w.line("sigma_B", "equivalent stress in service",
-		math.Hypot(w.largest/t.weakestArea, math.Sqrt(3)*remainingTorsion*w.torsion*tension), "MPa", guideline+"R8")
-	w.atMost("working stress", working, class.YieldStrength, "MPa", guideline+"R8")
+		math.Hypot(w.largest/t.weakestArea, math.Sqrt(3)*remainingTorsion*elasticTorsion*w.torsion*tension), "MPa", guideline+"R8")
+	w.atMost("working stress", working, w.hotYield/w.joint.Safety.Yield, "MPa", guideline+"R8")
 }
 
 func (w *work) checkClamp() {
@@ -84,11 +83,11 @@ func (w *work) checkClamp() {
 		w.line("F_slip", "load that friction must carry", demand, "N", guideline+"R12")
 		holds := w.line("F_grip", "load that friction holds at the lowest residual clamp",
 			math.Max(0, w.lowestClamp)*c.InterfaceFriction*float64(c.Interfaces), "N", guideline+"R12")
-		w.atMost("slip", demand, holds, "N", guideline+"R12")
+		w.atMost("slip", demand, holds/w.joint.Safety.Slip, "N", guideline+"R12")
 	}
 	if axial.Low < 0 {
-		taken := w.line("F_taken", "preload taken from the bolt by embedding, temperature and compression",
-			w.embedding+w.thermalLoss-w.loadFactor*axial.Low, "N", guideline+"R3")
+		taken := w.line("F_taken", "preload taken from the bolt by the losses and by compression",
+			w.lowest-w.lowestClamp-w.relief-w.loadFactor*axial.Low, "N", guideline+"R3")
 		w.atMost("bolt force under compression", taken, w.lowest, "N", guideline+"R3")
 	}
 }
@@ -117,7 +116,8 @@ func (w *work) checkFatigue() {
 		EnduranceLimit(t.diameter), "MPa", guideline+"R9, from memory")
 	life := math.Cbrt(enduranceCycles / math.Min(math.Max(cycles, fewestCycles), enduranceCycles))
 	limit := w.line("sigma_lim", "fatigue limit at the stated cycles", endurance*life, "MPa", guideline+"R9, from memory")
-	w.atMost("fatigue", amplitude, limit, "MPa", guideline+"R9")
+	w.safety("S_D", "least safety factor of the stress amplitude", w.stated.Fatigue)
+	w.atMost("fatigue", amplitude, limit/w.joint.Safety.Fatigue, "MPa", guideline+"R9")
 }
 
 // checkBearing compares the pressure under head, nut and washers at assembly
@@ -128,9 +128,9 @@ func (w *work) checkBearing() {
 			"MPa", guideline+"R10")
 		service := w.lineAt(i+1, "p_B", "bearing pressure under the "+f.name+" in service", w.largest/f.area(), "MPa",
 			guideline+"R10")
-		c := w.atMost("bearing pressure under the "+f.name+", assembly", assembly, f.pressure, "MPa", guideline+"R10")
+		c := w.atMost("bearing pressure under the "+f.name+", assembly", assembly, f.pressure/w.joint.Safety.Pressure, "MPa", guideline+"R10")
 		c.Rule, c.Index = "bearing assembly", i+1
-		c = w.atMost("bearing pressure under the "+f.name+", service", service, f.pressure, "MPa", guideline+"R10")
+		c = w.atMost("bearing pressure under the "+f.name+", service", service, f.pressure/w.joint.Safety.Pressure, "MPa", guideline+"R10")
 		c.Rule, c.Index = "bearing service", i+1
 	}
 }
@@ -144,5 +144,5 @@ func (w *work) checkThread() {
 		return
 	}
 	w.atLeast("thread engagement", w.joint.Engagement(), w.engagementNeeded, "mm", guideline+"R11").Rule = "tapped engagement"
-	w.atMost("thread stripping", w.largest, w.strip, "N", guideline+"R11")
+	w.atMost("thread stripping", w.largest, w.strip/w.joint.Safety.Stripping, "N", guideline+"R11")
 }

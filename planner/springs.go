@@ -103,8 +103,10 @@ func (w *work) clampedSpring() {
 		if !cones.Tapped {
 			w.lineAt(i+1, "c_N", "nut cone in "+l.name+", length over area", piece.FarCone, "1/mm", guideline+"5.1.2")
 		}
-		sum += w.lineByAt("delta_P_i."+joint, i+1, "delta_P", "compliance of "+l.name, piece.Sum()/l.modulus, "mm/N",
+		compliance := w.lineByAt("delta_P_i."+joint, i+1, "delta_P", "compliance of "+l.name, piece.Sum()/l.modulus, "mm/N",
 			guideline+"5.1.2")
+		w.layerCompliances = append(w.layerCompliances, compliance)
+		sum += compliance
 		depth = end
 	}
 	w.clampedCompliance = w.line("delta_P", "compliance of the clamped parts", sum, "mm/N", guideline+"5.1.2")

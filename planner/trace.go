@@ -44,6 +44,14 @@ func (w *work) lineAt(i int, symbol, meaning string, value float64, unit, source
 	return value
 }
 
+// safety puts down a safety factor that the register states; one that it leaves to
+// the method is 1 and stands among the assumptions.
+func (w *work) safety(symbol, meaning string, factor float64) {
+	if factor > 0 {
+		w.input(symbol, meaning, factor, "-", stated)
+	}
+}
+
 func indexed(symbol string, i int) string { return symbol + "_" + strconv.Itoa(i) }
 
 // assumed puts down what the plan takes for granted because nothing was

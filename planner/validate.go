@@ -36,7 +36,14 @@ func (j Joint) Faults() []Fault {
 	v.pattern(j)
 	v.clamp(j.Clamp)
 	v.loads(j.Loads)
+	v.safety(j.Safety)
+	v.losses(j.Losses)
+	before = len(v.faults)
 	v.temperature(j.Temperature)
+	v.hotValues(j)
+	if len(v.faults) == before && j.Temperature != nil {
+		v.heat(j)
+	}
 	v.friction(j.Friction)
 	v.tightening(j.Tightening)
 	v.require(j.Roughness >= 0 && j.Roughness < MaxRoughness, at("surfaces"), "state Rz above 0 and below 160 um",
@@ -195,6 +202,12 @@ func (v *validator) temperature(t *Temperature) {
 		return
 	}
 	possible := func(c float64) bool { return c >= -273.15 && c <= 1000 }
+	for i, s := range t.States {
+		v.require(possible(s.Bolt), itemOf("temperature.states", i, "bolt"), "state -273.15 to 1000 degC",
+			"%g degC is impossible", s.Bolt)
+		v.require(possible(s.Parts), itemOf("temperature.states", i, "parts"), "state -273.15 to 1000 degC",
+			"%g degC is impossible", s.Parts)
+	}
 	v.require(possible(t.Assembly), at("temperature.assembly"), "state -273.15 to 1000 degC",
 		"%g degC is impossible", t.Assembly)
 	v.require(possible(t.Service.Low) && possible(t.Service.High) && t.Service.Low <= t.Service.High,

@@ -74,7 +74,7 @@ func TestRecordKeys(t *testing.T) {
 		"torque", "angle", "residual_clamp", "checks", "trace", "assumptions"}, keys(joint))
 	for object, want := range map[string][]string{
 		"stiffness": {"bolt_compliance_mm_per_N", "clamped_compliance_mm_per_N", "load_factor"},
-		"work_back": {"required_residual_clamp_N", "load_relief_N", "embedding_loss_N", "thermal_loss_N",
+		"work_back": {"required_residual_clamp_N", "load_relief_N", "embedding_loss_N", "closing_loss_N", "thermal_loss_N", "softening_loss_N", "relaxation_loss_N",
 			"required_preload_N"},
 		"preload":        {"limit_N", "lowest_N", "highest_N", "scatter_factor"},
 		"torque":         {"window_low_Nm", "target_Nm", "window_high_Nm"},

@@ -111,9 +111,19 @@ func (t *text) workBack(p planner.Plan) {
 	t.force("required residual clamp", quantity.RoundUp(b.RequiredResidualClamp, 10))
 	t.force("+ load taken from the clamp", quantity.RoundUp(b.LoadRelief, 10))
 	t.force("+ lost by embedding", quantity.RoundUp(b.EmbeddingLoss, 10))
+	t.loss("+ lost by closing layers", b.ClosingLoss)
 	t.force("+ lost by temperature", quantity.RoundUp(b.ThermalLoss, 10))
+	t.loss("+ lost by softer moduli", b.SofteningLoss)
+	t.loss("+ lost by relaxation", b.RelaxationLoss)
 	t.force("= required assembly preload", quantity.RoundUp(b.RequiredPreload, 10))
 	t.force("highest preload tolerated", quantity.RoundDown(p.Preload.Limit, 10))
+}
+
+// loss prints a loss that only some joints have.
+func (t *text) loss(name string, newton float64) {
+	if newton > 0 {
+		t.force(name, quantity.RoundUp(newton, 10))
+	}
 }
 
 func (t *text) force(name string, newton float64) {

@@ -11,7 +11,7 @@ import (
 // jointKeys are the keys of a joint, and so of defaults.
 var jointKeys = []string{
 	"id", "name", "count", "pattern", "bolt", "nut", "tapped", "washers", "clamped", "clamp", "loads", "temperature",
-	"friction", "tightening", "surfaces",
+	"friction", "tightening", "surfaces", "safety", "losses",
 }
 
 // joint reads one joint, already merged with the defaults.
@@ -52,6 +52,12 @@ func (d *decoder) joint(n *node) planner.Joint {
 	if o.stated("surfaces") {
 		j.Roughness = readSurfaces(o.at("surfaces"))
 	}
+	if o.stated("safety") {
+		j.Safety = readSafety(o.at("safety"))
+	}
+	if o.stated("losses") {
+		j.Losses = readLosses(o.at("losses"))
+	}
 	if o.stated("pattern") {
 		j.Pattern = readPattern(o.at("pattern"), j.Count)
 	}
@@ -67,7 +73,7 @@ func isInchThread(designation string) bool {
 }
 
 func readBolt(f field) planner.Bolt {
-	o := f.object("thread", "length", "head", "property_class", "shank", "segments")
+	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "hot_modulus", "hot_yield")
 	var b planner.Bolt
 	switch {
 	case !o.require("thread", "M12"):
@@ -84,6 +90,7 @@ func readBolt(f field) planner.Bolt {
 		shank := o.at("shank").quantity(quantity.Length)
 		b.Shank = &shank
 	}
+	b.HotModulus, b.HotYield = o.some("hot_modulus", quantity.Pressure), o.some("hot_yield", quantity.Pressure)
 	if !o.stated("segments") {
 		return b
 	}
@@ -161,7 +168,7 @@ func readEnds(o *object, j *planner.Joint) {
 func readParts(f field) []planner.Part {
 	var parts []planner.Part
 	for _, item := range f.items("clamped part") {
-		o := item.object("part", "material", "thickness", "hole", "outer_diameter")
+		o := item.object("part", "material", "thickness", "hole", "outer_diameter", "hot_modulus")
 		var p planner.Part
 		if o.require("part", "flange") {
 			p.Name = o.at("part").label()
@@ -175,6 +182,7 @@ func readParts(f field) []planner.Part {
 		p.Thickness = o.one("thickness", quantity.Length)
 		p.Hole = o.one("hole", quantity.Length)
 		p.OuterDiameter = o.one("outer_diameter", quantity.Length)
+		p.HotModulus = o.some("hot_modulus", quantity.Pressure)
 		parts = append(parts, p)
 	}
 	return parts

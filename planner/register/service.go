@@ -47,10 +47,17 @@ func readLoads(f field) planner.Loads {
 }
 
 func readTemperature(f field) *planner.Temperature {
-	o := f.object("assembly", "service")
+	o := f.object("assembly", "service", "states")
 	var t planner.Temperature
 	if o.require("assembly", "20 degC") {
 		t.Assembly = o.at("assembly").quantity(quantity.Temperature)
+	}
+	if o.stated("states") {
+		if o.stated("service") {
+			o.at("service").wrong("both service and states are stated", "keep one of them")
+		}
+		t.States = readThermalStates(o.at("states"))
+		return &t
 	}
 	if o.require("service", "90 degC") {
 		t.Service = o.at("service").span(quantity.Temperature)
@@ -106,4 +113,60 @@ func readSurfaces(f field) float64 {
 		f.wrong(fmt.Sprintf("surfaces: Rz %g um is impossible", rz*1000), mend)
 	}
 	return rz
+}
+
+// readThermalStates reads the states in which bolt and parts differ.
+func readThermalStates(f field) []planner.ThermalState {
+	var states []planner.ThermalState
+	for _, item := range f.items("state") {
+		o := item.object("state", "bolt", "parts")
+		o.require("state", "start-up")
+		o.require("bolt", "20 degC")
+		o.require("parts", "90 degC")
+		states = append(states, planner.ThermalState{
+			Name: o.label("state"), Bolt: o.one("bolt", quantity.Temperature), Parts: o.one("parts", quantity.Temperature),
+		})
+	}
+	if len(states) == 0 && f.node.kind == list {
+		f.wrong("states is empty", "list at least one: {state: running, bolt: 90 degC, parts: 110 degC}")
+	}
+	return states
+}
+
+func readSafety(f field) planner.Safety {
+	o := f.object("slip", "yield", "fatigue", "bearing_pressure", "stripping", "shear")
+	return planner.Safety{
+		Slip:      o.some("slip", quantity.Number),
+		Yield:     o.some("yield", quantity.Number),
+		Fatigue:   o.some("fatigue", quantity.Number),
+		Pressure:  o.some("bearing_pressure", quantity.Number),
+		Stripping: o.some("stripping", quantity.Number),
+		Shear:     o.some("shear", quantity.Number),
+	}
+}
+
+// readLosses reads what the clamp loses in service. Each share or length that is no
+// guide value needs its source.
+func readLosses(f field) planner.Losses {
+	o := f.object("settlement", "settlement_source", "layers", "relaxation", "relaxation_source")
+	l := planner.Losses{Settlement: o.some("settlement", quantity.Length), Relaxation: o.some("relaxation", quantity.Ratio)}
+	if o.stated("settlement") && o.require("settlement_source", "where it was measured") {
+		l.SettlementSource = o.at("settlement_source").label()
+	}
+	if o.stated("relaxation") && o.require("relaxation_source", "where the share comes from") {
+		l.RelaxationSource = o.at("relaxation_source").label()
+	}
+	if !o.stated("layers") {
+		return l
+	}
+	for _, item := range o.at("layers").items("layer") {
+		layer := item.object("layer", "amount", "source")
+		layer.require("layer", "paint")
+		layer.require("amount", "10 um")
+		layer.require("source", "where the amount comes from")
+		l.Layers = append(l.Layers, planner.Closing{
+			Name: layer.label("layer"), Amount: layer.one("amount", quantity.Length), Source: layer.label("source"),
+		})
+	}
+	return l
 }

@@ -203,16 +203,17 @@ func (b *book) writeChecks(w *writer, c *calculation) error {
 	if err := w.put(heading...); err != nil {
 		return err
 	}
+	repeated := countRepeated(c.plan.Trace)
 	for _, check := range c.plan.Checks {
 		f, ok := b.formulas.checks[check.Rule]
 		if !ok {
 			return fmt.Errorf("checks.csv has no rule %q", check.Rule)
 		}
-		value, err := numbers{}.expand(f.value, check.Index)
+		value, err := repeated.expand(f.value, check.Index)
 		if err != nil {
 			return fmt.Errorf("checks.csv, rule %q: %w", check.Rule, err)
 		}
-		limit, err := numbers{}.expand(f.limit, check.Index)
+		limit, err := repeated.expand(f.limit, check.Index)
 		if err != nil {
 			return fmt.Errorf("checks.csv, rule %q: %w", check.Rule, err)
 		}

@@ -39,13 +39,16 @@ func readFormulas(folder fs.FS) (formulas, error) {
 	return f, nil
 }
 
-// numbers says how many lines each repeated symbol of a plan has.
+// numbers says how many lines each repeated symbol of a plan has; 0 for a symbol
+// that is not repeated.
 type numbers map[string]int
 
 func countRepeated(trace []planner.Line) numbers {
 	n := numbers{}
 	for _, l := range trace {
-		if l.Index > 0 {
+		if l.Index == 0 {
+			n[l.Symbol] += 0 // delta_S stands beside delta_S_1
+		} else {
 			n[strings.TrimSuffix(l.Symbol, "_"+strconv.Itoa(l.Index))] = l.Index
 		}
 	}
@@ -59,6 +62,9 @@ func countRepeated(trace []planner.Line) numbers {
 //	{sum x}          x_1+x_2+...
 //	{list x}         x_1,x_2,...
 //	{products x y}   x_1*y_1+x_2*y_2+...
+//	{opt x y}        x when the plan has the symbol, y when not
+//
+// # in a symbol stands for the index.
 func (n numbers) expand(formula string, index int) (string, error) {
 	var out strings.Builder
 	for {
@@ -81,7 +87,7 @@ func (n numbers) expand(formula string, index int) (string, error) {
 }
 
 func (n numbers) placeholder(p string, index int) (string, error) {
-	words := strings.Fields(p)
+	words := strings.Fields(strings.ReplaceAll(p, "#", strconv.Itoa(index)))
 	switch {
 	case p == "i" && index > 0:
 		return strconv.Itoa(index), nil
@@ -95,6 +101,11 @@ func (n numbers) placeholder(p string, index int) (string, error) {
 		return n.join(separator, words[1]), nil
 	case len(words) == 3 && words[0] == "products" && n[words[1]] > 0 && n[words[1]] == n[words[2]]:
 		return n.join("+", words[1], words[2]), nil
+	case len(words) == 3 && words[0] == "opt":
+		if _, has := n[words[1]]; has {
+			return words[1], nil
+		}
+		return words[2], nil
 	}
 	return "", fmt.Errorf("the placeholder {%s} cannot be filled", p)
 }

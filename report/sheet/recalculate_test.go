@@ -211,7 +211,7 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 		{0, "h_2", 21, func(j *planner.Joint) { j.Parts[0].Thickness = 21 }},
 		{0, "mu_G_max", 0.17, func(j *planner.Joint) { j.Friction.Thread.High = 0.17 }},
 		{0, "D_A", 22, func(j *planner.Joint) { j.Parts[0].OuterDiameter = 22 }},
-		{0, "temp_hi", 140, func(j *planner.Joint) { j.Temperature.Service.High = 140 }},
+		{0, "temp_lo", -40, func(j *planner.Joint) { j.Temperature.Service.Low = -40 }},
 		{1, "h_2", 44, func(j *planner.Joint) { j.Parts[0].Thickness = 44 }}, // too little thread engaged
 		{1, "mu_K_min", 0.06, func(j *planner.Joint) { j.Friction.Head.Low = 0.06 }},
 		{1, "tau_BM", 90, func(j *planner.Joint) { j.Tapped.Material.ShearStrength = 90 }},
