@@ -132,10 +132,11 @@ func (c *checker) number(path, what string, v, most float64, d quantity.Dimensio
 }
 
 // What may be left of a moment that the bolts cannot carry and still be none:
-// what the rounding of stated figures explains, in parts of the moment, and what
-// the rounding of sums explains, in parts of their terms.
+// what the rounding of stated figures explains (places to 0.01 mm, moments to four
+// digits), in parts of the moment, and what the rounding of sums explains, in
+// parts of their terms.
 const (
-	statedRounding = 1e-5
+	statedRounding = 1e-4
 	sumRounding    = 1e-12
 )
 

@@ -88,13 +88,24 @@ func TestWhatALineCarries(t *testing.T) {
 	for i, want := range []float64{-10, 0, 10} {
 		assert.InDelta(t, want, shares[3+i].Y, 1e-12)
 	}
-	// A moment across a sloping line, both rounded to six figures.
-	slope := []pattern.Point{{X: 0, Y: 0}, {X: 86.603, Y: 50}, {X: 173.205, Y: 100}}
+	// A moment across a line 30 deg from x, places rounded to 0.01 mm.
+	slope := []pattern.Point{{X: 0, Y: 0}, {X: 86.6, Y: 50}, {X: 173.21, Y: 100}}
 	shares, err = group.Distribute(slope, []group.Load{{Name: "m", Moment: group.Vector{X: -600e3, Y: 1039.23e3}}})
 	require.NoError(t, err)
 	for i, want := range []float64{6000, 0, -6000} { // 1200 N.m over 200 mm
-		assert.InDelta(t, want, shares[i].Axial, 0.1)
+		assert.InDelta(t, want, shares[i].Axial, 1)
 	}
+	// A force at the centroid, where the sums leave rounding for a moment.
+	p := group.PropertiesOf(slope)
+	for _, off := range []float64{0, 1e-11} {
+		shares, err = group.Distribute(slope, []group.Load{{Name: "pull", Force: group.Vector{Z: 3e5}, At: group.Vector{X: p.CentroidX + off, Y: p.CentroidY}}})
+		require.NoError(t, err)
+		for _, s := range shares {
+			assert.InDelta(t, 1e5, s.Axial, 1e-6)
+		}
+	}
+	_, err = group.Distribute(slope, []group.Load{{Name: "m", Moment: group.Vector{X: -600e3, Y: 1038e3}}})
+	assert.ErrorContains(t, err, "about the line, which is 29.9993 deg from the x axis")
 	shares, err = group.Distribute([]pattern.Point{{X: 25.4, Y: -3.3}}, []group.Load{
 		{Name: "pull", Force: group.Vector{X: 5, Z: 900}, At: group.Vector{X: 25.4, Y: -3.3}}})
 	require.NoError(t, err)
