@@ -2,6 +2,7 @@ package planner
 
 import (
 	"clampback/planner/fastener"
+	"clampback/planner/group"
 	"clampback/planner/pattern"
 	"clampback/planner/quantity"
 )
@@ -37,6 +38,10 @@ type Joint struct {
 	Temperature *Temperature // nil: service at assembly temperature
 	Friction    Friction
 	Tightening  Tightening
+
+	// Group is what each bolt gets in each load case on the whole joint, by case and
+	// bolt; it stands in place of Loads.Axial. Nil: not stated.
+	Group []group.Share
 }
 
 // Bolt is the bolt of a joint.

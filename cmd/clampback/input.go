@@ -1,10 +1,15 @@
 package main
 
 import (
+	"bytes"
 	"context"
+	"errors"
+	"fmt"
 	"io"
+	"io/fs"
 	"iter"
 	"os"
+	"path/filepath"
 	"time"
 
 	"github.com/schollz/progressbar/v3"
@@ -46,7 +51,57 @@ func openSource(stdin io.Reader, name string) (register.Source, error) {
 	if info, err := f.Stat(); err == nil && info.IsDir() {
 		return register.Source{}, mendable("name the register files in it", "%s is a folder", name)
 	}
-	return register.ReadSource(f, name)
+	source, err := register.ReadSource(f, name)
+	source.Open = beside(filepath.Dir(name))
+	return source, err
+}
+
+// maxBeside is the largest file that a register may name, bytes.
+const maxBeside = 200 << 20
+
+// beside returns how files that a register names are read. Relative names count
+// from the register's folder. Absolute ones, and those that lead out of the folder,
+// are as good: a plant may keep its finite-element results elsewhere, and whoever
+// runs clampback may read them.
+func beside(folder string) func(name string) ([]byte, error) {
+	return func(name string) ([]byte, error) {
+		if !filepath.IsAbs(name) {
+			name = filepath.Join(folder, name)
+		}
+		info, err := os.Stat(name) // before opening: a pipe would wait for its writer
+		switch {
+		case err != nil:
+			return nil, fileError(name, err)
+		case !info.Mode().IsRegular():
+			return nil, fmt.Errorf("%s is no file", name)
+		case info.Size() > maxBeside:
+			return nil, tooLarge(name)
+		}
+		f, err := os.Open(name)
+		if err != nil {
+			return nil, fileError(name, err)
+		}
+		defer f.Close()
+		data := bytes.NewBuffer(make([]byte, 0, info.Size()+bytes.MinRead))
+		if _, err := data.ReadFrom(io.LimitReader(f, maxBeside+1)); err != nil {
+			return nil, fileError(name, err)
+		}
+		if data.Len() > maxBeside { // it grew
+			return nil, tooLarge(name)
+		}
+		return data.Bytes(), nil
+	}
+}
+
+func tooLarge(name string) error { return fmt.Errorf("%s is larger than %d MB", name, maxBeside>>20) }
+
+// fileError says which file and why, without the system call.
+func fileError(name string, err error) error {
+	var e *fs.PathError
+	if errors.As(err, &e) {
+		err = e.Err
+	}
+	return fmt.Errorf("%s: %w", name, err)
 }
 
 // planEach plans the joints one by one as they are asked for, with a progress bar

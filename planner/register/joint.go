@@ -10,8 +10,8 @@ import (
 
 // jointKeys are the keys of a joint, and so of defaults.
 var jointKeys = []string{
-	"id", "name", "count", "pattern", "bolt", "nut", "tapped", "washers", "clamped", "clamp", "loads", "temperature",
-	"friction", "tightening", "surfaces", "safety", "losses",
+	"id", "name", "count", "pattern", "bolt", "nut", "tapped", "washers", "clamped", "clamp", "loads", "group",
+	"losses", "temperature", "friction", "tightening", "surfaces", "safety",
 }
 
 // joint reads one joint, already merged with the defaults.
@@ -37,9 +37,6 @@ func (d *decoder) joint(n *node) planner.Joint {
 	if o.require("clamp", "{residual: 12 kN}") {
 		j.Clamp = readClamp(o.at("clamp"))
 	}
-	if o.require("loads", "{axial: 0 to 9.5 kN, introduction_factor: 0.5}, or {axial: 0 kN} where there is none") {
-		j.Loads = readLoads(o.at("loads"))
-	}
 	if o.stated("temperature") {
 		j.Temperature = readTemperature(o.at("temperature"))
 	}
@@ -61,6 +58,7 @@ func (d *decoder) joint(n *node) planner.Joint {
 	if o.stated("pattern") {
 		j.Pattern = readPattern(o.at("pattern"), j.Count)
 	}
+	readAllLoads(o, &j) // after the pattern, over which a group's are shared out
 	return j
 }
 

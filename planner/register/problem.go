@@ -96,13 +96,20 @@ func (p *problems) at(pos position, message, mend string) {
 	})
 }
 
-// sorted returns the problems in order, each once: a mistake in defaults would
-// otherwise show for every joint.
-func sorted(all []Problem) []Problem {
+// sorted returns the problems of a register in order, then those of the files
+// that it names, each once: a mistake in defaults would otherwise show for every
+// joint.
+func sorted(name string, all []Problem) []Problem {
+	file := func(p Problem) string {
+		if p.File == name {
+			return ""
+		}
+		return p.File
+	}
 	slices.SortStableFunc(all, func(a, b Problem) int {
-		return cmp.Or(cmp.Compare(a.Line, b.Line), cmp.Compare(a.Column, b.Column), cmp.Compare(a.Message, b.Message))
+		return cmp.Or(cmp.Compare(file(a), file(b)), cmp.Compare(a.Line, b.Line), cmp.Compare(a.Column, b.Column), cmp.Compare(a.Message, b.Message))
 	})
 	return slices.CompactFunc(all, func(a, b Problem) bool {
-		return a.Line == b.Line && a.Column == b.Column && a.Message == b.Message
+		return a.File == b.File && a.Line == b.Line && a.Column == b.Column && a.Message == b.Message
 	})
 }

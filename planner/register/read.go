@@ -30,7 +30,7 @@ func Read(sources ...Source) ([]planner.Joint, error) {
 			seen[f.joint.ID] = place
 			joints = append(joints, f.joint)
 		}
-		all = append(all, sorted(problems)...)
+		all = append(all, sorted(in.Name, problems)...)
 	}
 	if len(all) > 0 {
 		return nil, &ProblemsError{all}
@@ -153,7 +153,7 @@ func readJoint(s *source, h header, own *node) jointResult {
 	if !whole.is(mapping, "write it as - id: A-010, with its other keys below") {
 		return jointResult{problems: d.all}
 	}
-	n := merge(h.defaults, own)
+	n := mergeJoint(h.defaults, own)
 	j := d.joint(n)
 	j.Assembly, j.Revision, j.PreparedBy = h.assembly, h.revision, h.preparedBy
 	for _, f := range j.Faults() {

@@ -4,6 +4,7 @@ import (
 	"errors"
 	"fmt"
 	"os"
+	"path/filepath"
 	"strings"
 	"testing"
 
@@ -23,7 +24,9 @@ func demo(t testing.TB) string {
 }
 
 func read(text string) ([]planner.Joint, error) {
-	return register.Read(register.Source{Name: "pump.yaml", Data: []byte(text)})
+	return register.Read(register.Source{Name: "pump.yaml", Data: []byte(text), Open: func(name string) ([]byte, error) {
+		return os.ReadFile(filepath.Join("testdata", name))
+	}})
 }
 
 // good is a small register that reads well; tests spoil it line by line.
@@ -257,6 +260,8 @@ func BenchmarkRead10000(b *testing.B) {
 func FuzzRead(f *testing.F) {
 	f.Add([]byte(good))
 	f.Add([]byte(demo(f)))
+	f.Add([]byte(strings.Replace(good, "loads: {axial: 0 to 9.5 kN, introduction_factor: 0.5}",
+		"group: {loads: [{case: a, force: [0 kN, 1 kN, 0 kN], moment: [0 N.m, 0 N.m, 1 N.m], at: [0 mm, 0 mm, 9 mm]}]}", 1)))
 	for _, s := range []string{"", "a: [", "joints:\n- ", "joints:\n  - id: 1\n  - ? a",
 		"assembly: x\njoints: [a, {b: c}]", "? [a]\n: b", "a: |\n  x\n", "--- >\n", "joints: {}\n", "<<: {a: b}\n"} {
 		f.Add([]byte(s))

@@ -33,10 +33,29 @@ func readClamp(f field) planner.Clamp {
 	return c
 }
 
-func readLoads(f field) planner.Loads {
-	o := f.object("axial", "introduction_factor", "cycles")
+// needsAxial reports whether a joint must state the axial load of one bolt: where it
+// has no group, the loads on all of them.
+func needsAxial(joint *object) bool { return !joint.stated("group") && joint.d.knows("group") }
+
+// readAllLoads reads the loads of one bolt, and those of the group.
+func readAllLoads(o *object, j *planner.Joint) {
+	if o.stated("loads") || needsAxial(o) &&
+		o.require("loads", "{axial: 0 to 9.5 kN, introduction_factor: 0.5}, or {axial: 0 kN} where there is none") {
+		j.Loads = readLoads(o)
+	}
+	if o.stated("group") {
+		j.Group = readGroup(o, j)
+	}
+}
+
+// readLoads reads the loads of one bolt.
+func readLoads(joint *object) planner.Loads {
+	o := joint.at("loads").object("axial", "introduction_factor", "cycles")
 	l := planner.Loads{Cycles: o.some("cycles", quantity.Number)}
-	if o.require("axial", "0 to 9.5 kN") {
+	switch {
+	case o.stated("axial") && joint.stated("group"):
+		o.at("axial").wrong("both axial, the load of one bolt, and group, the loads of the whole joint, are stated", "keep one of them")
+	case o.stated("axial") || needsAxial(joint) && o.require("axial", "0 to 9.5 kN"):
 		l.Axial = o.at("axial").span(quantity.Force)
 	}
 	if o.stated("introduction_factor") {

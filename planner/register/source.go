@@ -29,6 +29,12 @@ const (
 type Source struct {
 	Name string // as errors print it: a path, or "standard input"
 	Data []byte
+
+	// Open reads a file that the register names, for example a table of bolt forces;
+	// a relative name counts from the register's folder. It is called by several
+	// goroutines at once. Nil where there is no folder, as for standard input: a
+	// register that names a file is then refused.
+	Open func(name string) ([]byte, error)
 }
 
 // ReadSource reads a register and refuses one larger than MaxSize.
@@ -53,6 +59,7 @@ type position struct{ line, column int }
 type source struct {
 	name  string
 	lines []string
+	open  func(name string) ([]byte, error) // Source.Open
 }
 
 func (s *source) line(n int) string {
@@ -65,7 +72,7 @@ func (s *source) line(n int) string {
 // guard makes lines of the bytes, or says why they are not parsed: bytes that are
 // no text, and nesting that no register needs but that makes parsers slow.
 func guard(in Source) (*source, []Problem) {
-	s := &source{name: in.Name}
+	s := &source{name: in.Name, open: in.Open}
 	p := &problems{source: s}
 	data := in.Data
 	if bytes.HasPrefix(data, []byte("\xef\xbb\xbf")) {

@@ -195,6 +195,7 @@ var alternatives = [][][]string{
 	{{"shank"}, {"segments"}},
 	{{"snug"}, {"snug_torque"}},
 	{{"circle"}, {"rows", "columns", "pitch"}, {"points"}},
+	{{"loads"}, {"forces"}}, // of a group
 }
 
 // merge lays a joint over the defaults: key by key where both have a mapping,
@@ -217,6 +218,37 @@ func merge(defaults, own *node) *node {
 		}
 	}
 	return merged
+}
+
+// mergeJoint lays a joint over the defaults. The loads of the group and the axial
+// load of one bolt exclude each other too, though they stand on different levels.
+func mergeJoint(defaults, own *node) *node {
+	merged := merge(defaults, own)
+	axial := func(joint *node) bool {
+		loads := joint.get("loads")
+		return loads != nil && loads.get("axial") != nil
+	}
+	switch group := own.get("group") != nil; {
+	case !group && axial(own):
+		return merged.without("group")
+	case group && !axial(own) && axial(merged):
+		loads := *merged
+		loads.entries = slices.Clone(merged.entries)
+		for i, e := range loads.entries {
+			if e.key == "loads" {
+				loads.entries[i].value = e.value.without("axial")
+			}
+		}
+		return &loads
+	}
+	return merged
+}
+
+// without returns a mapping without a key.
+func (n *node) without(key string) *node {
+	less := *n
+	less.entries = slices.DeleteFunc(slices.Clone(n.entries), func(e entry) bool { return e.key == key })
+	return &less
 }
 
 // excluded reports whether a joint states another way than the key's.
