@@ -62,7 +62,7 @@ func (w *work) assume() {
 
 func (w *work) assumeLoads() {
 	j := &w.joint
-	if j.Loads.IntroductionFactor == nil {
+	if j.Loads.IntroductionFactor == nil && j.Loads.Introduction == nil {
 		none := 1.0
 		j.Loads.IntroductionFactor = &none
 		w.assumed("no axial load, so the load introduction factor has no effect: 1 is shown")
@@ -72,10 +72,10 @@ func (w *work) assumeLoads() {
 		j.Temperature.Service.Low, j.Temperature.Service.High = roomTemperature, roomTemperature
 		w.assumed("temperature not stated: service at the temperature of assembly, 20 degC")
 	}
-	if j.Loads.Cycles == 0 && j.Loads.Axial.Width() > 0 {
+	if !j.Loads.cyclic() && (j.Loads.Axial.Width() > 0 || len(j.Group) > 0) {
 		w.assumed("load cycles not stated: the axial load is taken as static and fatigue is not checked")
 	}
-	if j.Clamp.slips() && j.Clamp.Interfaces == 0 {
+	if j.slips() && j.Clamp.Interfaces == 0 {
 		j.Clamp.Interfaces = 1
 		w.assumed("number of slip faces not stated: 1")
 	}
@@ -102,7 +102,7 @@ func (w *work) assumeShank() {
 // assumeMethod says what the method takes for granted in every joint.
 func (w *work) assumeMethod() {
 	j := w.joint
-	w.assumed("loaded and clamped concentrically; loads are per bolt and need no further factor")
+	w.assumeLoading()
 	w.assumed("the bolt is turned at the head; the other end is held")
 	w.assumed("friction: " + j.Friction.Source)
 	if j.Friction.State == "" {
@@ -113,7 +113,7 @@ func (w *work) assumeMethod() {
 	if j.Nut != nil {
 		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
-	if j.Loads.Cycles > 0 {
+	if j.Loads.cyclic() && !j.Bolt.RolledAfter {
 		w.assumed("thread rolled before heat treatment (the lower fatigue limit)")
 	}
 	if j.Tightening.Scatter == GuideScatter {
@@ -135,7 +135,7 @@ func (w *work) assumeSafety() {
 		recommended(&s.Slip, "against slip not stated: 1 (VDI 2230-1 recommends 1.2, 1.8 for alternating loads)")
 		recommended(&s.Shear, "against shear after slip not stated: 1 (VDI 2230-1 recommends 1.1)")
 	}
-	if w.joint.Loads.Cycles > 0 {
+	if w.joint.Loads.cyclic() {
 		recommended(&s.Fatigue, "against fatigue not stated: 1 (VDI 2230-1 recommends 1.2)")
 	}
 	recommended(&s.Yield, "against yield in service, bearing pressure and stripping: 1 where not stated (VDI 2230-1: 1.0)")
@@ -165,4 +165,43 @@ func (w *work) assumeHeat() {
 	if lowest < roomTemperature-40 {
 		w.assumed("toughness in the cold is not judged: properties below 20 degC are taken as at 20 degC")
 	}
+}
+
+// assumeLoading says how the bolt is taken to be loaded.
+func (w *work) assumeLoading() {
+	j := w.joint
+	if e := j.Eccentric; e != nil {
+		w.assumed("eccentric: the parts bend as one body about the stated axis, and what a working moment adds to the clamp is not counted on")
+		limit := math.Min(j.Bolt.Head.BearingDiameter, j.bearingOfNut()) + j.thinnestPart()
+		if e.Depth > limit {
+			w.assumed(fmt.Sprintf("the interface is %.4g mm deep, more than d_W + h = %.4g mm, for which the guideline's eccentric formulas hold: check by other means", e.Depth, limit))
+		}
+	} else {
+		w.assumed("loaded and clamped concentrically; loads need no further factor")
+	}
+	switch {
+	case len(j.GroupLoads) > 0:
+		w.assumed("rigid plates share the loads on the joint over bolts of equal stiffness (VDI 2230-2): where the plates bend, state bolt forces of a finite-element run")
+	case len(j.Group) > 0:
+		w.assumed("bolt forces are those of the finite-element run, taken as operating loads of the bolts without preload")
+	}
+	if len(j.Group) > 0 && j.Loads.cyclic() {
+		w.assumed("each bolt swings between its load cases, and the unloaded joint")
+	}
+}
+
+// bearingOfNut returns d_W at the far end; that of the head where there is no nut.
+func (j Joint) bearingOfNut() float64 {
+	if j.Nut == nil {
+		return j.Bolt.Head.BearingDiameter
+	}
+	return j.Nut.BearingDiameter
+}
+
+func (j Joint) thinnestPart() float64 {
+	thinnest := math.Inf(1)
+	for _, p := range j.Parts {
+		thinnest = math.Min(thinnest, p.Thickness)
+	}
+	return thinnest
 }

@@ -42,6 +42,11 @@ type Joint struct {
 	// Group is what each bolt gets in each load case on the whole joint, by case and
 	// bolt; it stands in place of Loads.Axial. Nil: not stated.
 	Group []group.Share
+	// GroupLoads are the load cases that Group was shared out from. Nil: Group came from
+	// a finite-element run.
+	GroupLoads []group.Load
+
+	Eccentric *Eccentric // nil: clamped and loaded concentrically
 }
 
 // Bolt is the bolt of a joint.
@@ -52,6 +57,8 @@ type Bolt struct {
 	Length   float64   // l, mm, from under the head to the end
 	Shank    *float64  // full-diameter length inside the grip, mm; nil: not stated
 	Segments []Segment // pieces of shank inside the grip, from the head down; instead of Shank
+
+	RolledAfter bool // thread rolled after heat treatment; false: before, or not known
 
 	HotModulus float64 // E_S at its highest temperature in service, MPa; 0: from the tables
 	HotYield   float64 // R_p0.2 at its highest temperature in service, MPa; 0: from the tables
@@ -97,6 +104,8 @@ type Clamp struct {
 type Loads struct {
 	Axial              quantity.Range // F_A, N; negative is compression
 	IntroductionFactor *float64       // n; nil: not stated
+	Introduction       *Introduction  // where the load enters, in place of n; nil: not stated
+	Spectrum           []Block        // in place of Cycles; Axial then spans its blocks
 	Cycles             float64        // load cycles between the ends of Axial; 0: static
 }
 

@@ -71,14 +71,13 @@ func (w *work) close() {
 // and the share of the load that the bolt gets. The load may be absent, so a
 // load that is always compressive relieves nothing.
 func (w *work) requirement() {
-	axial := w.joint.Loads.Axial
-	w.input("F_A_min", "lowest axial load, negative is compression", axial.Low, "N", stated)
-	w.input("F_A_max", "highest axial load", axial.High, "N", stated)
-	tension := math.Max(axial.High, 0)
 	w.relief = w.line("F_PA", "share of the load that relieves the clamp",
-		(1-w.loadFactor)*tension, "N", guideline+"R3")
-	w.boltShare = w.line("F_SA", "share of the load that the bolt carries",
-		w.loadFactor*tension, "N", guideline+"R3")
+		(1-w.loadFactor)*math.Max(w.axial.clamp, 0), "N", guideline+"R3")
+	share := math.Max(0, w.loadFactor*math.Max(w.axial.high, 0))
+	if e := w.joint.Eccentric; e != nil {
+		share += math.Max(0, w.momentFactor*e.MomentHigh)
+	}
+	w.boltShare = w.line("F_SA", "share of the load that the bolt carries", share, "N", guideline+"R3")
 	w.soften()
 	w.relax()
 	w.required = w.line("F_Mreq", "required assembly preload", w.beforeRelaxation()+w.relaxation, "N", guideline+"R5")

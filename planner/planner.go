@@ -17,8 +17,9 @@ func Work(joint Joint) (Plan, error) {
 	w := newWork(joint)
 	w.assume()
 	w.describe()    // the bolt, the loads and the tightening as numbers
-	w.demand()      // F_Kerf
 	w.springs()     // delta_S, delta_P, Phi
+	w.operate()     // F_A, F_Q, of a group those of the bolts that govern
+	w.demand()      // F_Kerf
 	w.losses()      // F_Z, dF_Vth
 	w.requirement() // F_Mreq
 	w.limit()       // F_lim
@@ -52,6 +53,16 @@ type work struct {
 	clampedCompliance float64 // delta_P
 	layerCompliances  []float64
 	loadFactor        float64 // Phi
+
+	tilt              float64 // beta_P, of the parts in bending, 1/(N mm)
+	eccentricClamping float64 // delta_P*
+	eccentricLoading  float64 // delta_P**
+	momentFactor      float64 // bolt force over working moment, 1/mm
+	boltTilt          float64 // beta_S, of the bolt in bending, 1/(N mm)
+
+	axial   axialLoads
+	governs []Governing
+	fatigue *Fatigue
 
 	residualClamp float64 // F_Kerf
 	relief        float64 // (1 - Phi) F_Amax, taken from the clamp
@@ -125,6 +136,8 @@ func (w *work) plan() Plan {
 		Joint:         w.joint,
 		Diagram:       w.diagram(),
 		AngleWindow:   w.angleRange(),
+		Governing:     w.governs,
+		Fatigue:       w.fatigue,
 	}
 }
 
@@ -150,7 +163,7 @@ func (w *work) diagram() stiffness.Diagram {
 		ClampedCompliance: w.clampedCompliance,
 		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
 		Loss:              w.lowest - w.lowestClamp - w.relief,
-		Axial:             w.joint.Loads.Axial,
+		Axial:             quantity.Range{Low: w.axial.low, High: w.axial.high},
 		LoadFactor:        w.loadFactor,
 		BoltShare:         w.boltShare,
 		ClampShare:        w.relief,

@@ -5,17 +5,16 @@ import "math"
 // residual works out the clamp force that the setting leaves in service. The
 // most remains at the highest preload with no load, or under compression.
 func (w *work) residual() {
-	axial := w.joint.Loads.Axial
 	w.lowestClamp = w.leastClamp(w.lowest)
 	w.highestClamp = w.line("F_KR_max", "highest residual clamp force in service",
-		w.highest-w.embedding+w.thermalGain+(1-w.loadFactor)*math.Max(-axial.Low, 0), "N", guideline+"R12")
+		w.highest-w.embedding+w.thermalGain+(1-w.loadFactor)*math.Max(-w.axial.low, 0), "N", guideline+"R12")
 }
 
 // check makes the service checks at the preloads that the setting gives.
 func (w *work) check() {
 	w.checkStress()
 	w.checkClamp()
-	if w.joint.Loads.Cycles > 0 {
+	if w.joint.Loads.cyclic() {
 		w.checkFatigue()
 	}
 	w.checkBearing()
@@ -74,7 +73,8 @@ func (w *work) checkStress() {
 
 func (w *work) checkClamp() {
 	w.atLeast("residual clamp", w.lowestClamp, w.residualClamp, "N", guideline+"R12")
-	c, axial := w.joint.Clamp, w.joint.Loads.Axial
+	c := w.joint.Clamp
+	c.Transverse = w.axial.transverse
 	if c.slips() {
 		demand := c.Transverse
 		if c.Torque > 0 {
@@ -85,39 +85,11 @@ func (w *work) checkClamp() {
 			math.Max(0, w.lowestClamp)*c.InterfaceFriction*float64(c.Interfaces), "N", guideline+"R12")
 		w.atMost("slip", demand, holds/w.joint.Safety.Slip, "N", guideline+"R12")
 	}
-	if axial.Low < 0 {
+	if w.axial.low < 0 {
 		taken := w.line("F_taken", "preload taken from the bolt by the losses and by compression",
-			w.lowest-w.lowestClamp-w.relief-w.loadFactor*axial.Low, "N", guideline+"R3")
+			w.lowest-w.lowestClamp-w.relief-w.loadFactor*w.axial.low, "N", guideline+"R3")
 		w.atMost("bolt force under compression", taken, w.lowest, "N", guideline+"R3")
 	}
-}
-
-// Fatigue of threads, VDI 2230-1:2015 R9 (from memory).
-const (
-	enduranceCycles = 2e6
-	fewestCycles    = 1e4 // the guideline's finite-life line starts here
-)
-
-// EnduranceLimit returns sigma_ASV, the stress amplitude, MPa, that a thread of
-// diameter d (mm) rolled before heat treatment endures 2e6 times:
-// 0.85 (150/d + 45). VDI 2230-1:2015 R9, from memory.
-func EnduranceLimit(d float64) float64 { return 0.85 * (150/d + 45) }
-
-// checkFatigue compares the stress amplitude on the stress area with the
-// endurance limit of a thread rolled before heat treatment, raised for a
-// finite life.
-func (w *work) checkFatigue() {
-	axial, t := w.joint.Loads.Axial, w.thread
-	cycles := w.joint.Loads.Cycles
-	w.input("N_cyc", "load cycles", cycles, "-", stated)
-	amplitude := w.line("sigma_a", "stress amplitude in the thread",
-		w.loadFactor*axial.Width()/2/t.stressArea, "MPa", guideline+"R9")
-	endurance := w.line("sigma_ASV", "endurance limit, rolled before heat treatment",
-		EnduranceLimit(t.diameter), "MPa", guideline+"R9, from memory")
-	life := math.Cbrt(enduranceCycles / math.Min(math.Max(cycles, fewestCycles), enduranceCycles))
-	limit := w.line("sigma_lim", "fatigue limit at the stated cycles", endurance*life, "MPa", guideline+"R9, from memory")
-	w.safety("S_D", "least safety factor of the stress amplitude", w.stated.Fatigue)
-	w.atMost("fatigue", amplitude, limit/w.joint.Safety.Fatigue, "MPa", guideline+"R9")
 }
 
 // checkBearing compares the pressure under head, nut and washers at assembly

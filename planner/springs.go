@@ -1,6 +1,9 @@
 package planner
 
-import "clampback/planner/stiffness"
+import (
+	"clampback/planner/fastener"
+	"clampback/planner/stiffness"
+)
 
 // springs works out the compliances of bolt and clamped parts and the load
 // factor.
@@ -9,8 +12,15 @@ func (w *work) springs() {
 	w.boltSpring()
 	w.clampedSpring()
 
-	n := *w.joint.Loads.IntroductionFactor
-	w.input("n", "load introduction factor", n, "-", stated)
+	w.bending(w.joint.body().Cones())
+	n := w.introduction()
+	if e := w.joint.Eccentric; e != nil {
+		w.loadFactor = w.lineBy("Phi.eccentric", "Phi", "load factor",
+			n*w.eccentricLoading/(w.boltCompliance+w.eccentricClamping), "-", guideline+"R3")
+		w.momentFactor = w.line("Phi_m", "bolt force over working moment",
+			n*e.BoltOffset*w.tilt/(w.boltCompliance+w.eccentricClamping), "1/mm", guideline+"R3")
+		return
+	}
 	w.loadFactor = w.line("Phi", "load factor",
 		stiffness.LoadFactor(n, w.boltCompliance, w.clampedCompliance), "-", guideline+"R3")
 }
@@ -30,10 +40,7 @@ func (w *work) boltSpring() {
 	modulus := j.Bolt.Class.Modulus
 	w.input("E_S", "modulus of the bolt", modulus, "MPa", j.Bolt.Class.Source)
 
-	headLength := stiffness.HexagonHeadLength
-	if j.Bolt.Head.Kind == "socket cap" {
-		headLength = stiffness.SocketHeadLength
-	}
+	headLength := headLengthOf(j.Bolt.Head)
 	w.input("c_SK", "equivalent length of the head over d", headLength, "-", guideline+"5.1.1")
 	sum := w.line("delta_SK", "compliance of the head",
 		stiffness.Rod(headLength*t.diameter, t.nominalArea, modulus), "mm/N", guideline+"5.1.1")
@@ -60,6 +67,14 @@ func (w *work) boltSpring() {
 		rule = "delta_S.shank"
 	}
 	w.boltCompliance = w.lineBy(rule, "delta_S", "compliance of the bolt", sum, "mm/N", guideline+"5.1.1")
+}
+
+// headLengthOf returns l_SK/d of a head.
+func headLengthOf(h fastener.Head) float64 {
+	if h.Kind == "socket cap" {
+		return stiffness.SocketHeadLength
+	}
+	return stiffness.HexagonHeadLength
 }
 
 // engagementSpring is the give of the nut or of the tapped thread.

@@ -52,6 +52,8 @@ func (w *work) safety(symbol, meaning string, factor float64) {
 	}
 }
 
+func itoa(i int) string { return strconv.Itoa(i) }
+
 func indexed(symbol string, i int) string { return symbol + "_" + strconv.Itoa(i) }
 
 // assumed puts down what the plan takes for granted because nothing was

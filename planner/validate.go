@@ -34,8 +34,12 @@ func (j Joint) Faults() []Fault {
 	}
 	v.materials(j)
 	v.pattern(j)
-	v.clamp(j.Clamp)
-	v.loads(j.Loads)
+	v.clamp(j.Clamp, j.slips())
+	v.loads(j.Loads, len(j.Group) > 0)
+	v.spectrum(j.Loads)
+	v.introduction(j)
+	v.group(j)
+	v.eccentric(j)
 	v.safety(j.Safety)
 	v.losses(j.Losses)
 	before = len(v.faults)
@@ -156,7 +160,7 @@ func (v *validator) material(m fastener.Material, where place) {
 	v.notNegative(m.TensileStrength, pressures, property("tensile_strength"), "the tensile strength")
 }
 
-func (v *validator) clamp(c Clamp) {
+func (v *validator) clamp(c Clamp, slips bool) {
 	v.notNegative(c.Residual, forces, at("clamp.residual"), "the residual clamp force")
 	v.notNegative(c.Transverse, forces, at("clamp.transverse"), "the transverse load")
 	v.notNegative(c.Torque, torques, at("clamp.torque"), "the torque about the bolt axis")
@@ -164,14 +168,14 @@ func (v *validator) clamp(c Clamp) {
 	v.notNegative(c.SealPressure, pressures, at("clamp.seal.pressure"), "the sealed pressure")
 	v.require(c.Interfaces >= 0 && c.Interfaces <= 100, at("clamp.interfaces"),
 		"state how many faces carry the load, for example 1", "the number of slip faces is %d", c.Interfaces)
-	nothing := c.Residual == 0 && c.Transverse == 0 && c.Torque == 0 && c.SealArea*c.SealPressure == 0
+	nothing := !slips && c.Residual == 0 && c.Transverse == 0 && c.Torque == 0 && c.SealArea*c.SealPressure == 0
 	v.require(!nothing, at("clamp"), "state residual, transverse, torque or seal", "nothing says what the joint must hold")
 	v.require(c.TorqueRadius != 0 || c.Torque <= 0, at("clamp.torque_radius", "clamp.torque"), "add torque_radius: 40 mm",
 		"the torque about the bolt axis has no friction radius")
 	v.positiveOrNone(c.TorqueRadius, lengths, at("clamp.torque_radius"), "the friction radius of the torque",
 		"state it as a length, for example 40 mm")
 	if c.InterfaceFriction == 0 {
-		v.require(!c.slips(), at("clamp.interface_friction", "clamp.transverse", "clamp.torque"), "add interface_friction: 0.12",
+		v.require(!slips, at("clamp.interface_friction", "clamp.transverse", "clamp.torque", "group"), "add interface_friction: 0.12",
 			"friction must carry a load, but the interface friction is not stated")
 		return
 	}
@@ -179,12 +183,12 @@ func (v *validator) clamp(c Clamp) {
 		"state the least one as a plain number, for example 0.12")
 }
 
-func (v *validator) loads(l Loads) {
+func (v *validator) loads(l Loads, grouped bool) {
 	inside := l.Axial.Low >= -forces.most && l.Axial.High <= forces.most
 	v.require(inside && l.Axial.Low <= l.Axial.High, at("loads.axial"), "write it as 0 to 9.5 kN",
 		"the axial load of %s to %s is impossible", measured{l.Axial.Low, quantity.Force}, measured{l.Axial.High, quantity.Force})
 	if l.IntroductionFactor == nil {
-		v.require(l.Axial == quantity.Range{}, at("loads.introduction_factor", "loads.axial"),
+		v.require(l.Introduction != nil || (!grouped && l.Axial == quantity.Range{}), at("loads.introduction_factor", "loads.axial", "loads.introduction", "loads.spectrum", "group"),
 			"state introduction_factor: 1 where the load enters at head and nut, 0.5 where it enters half way to the interface, less nearer to it",
 			"the axial load has no load introduction factor")
 	} else {

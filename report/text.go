@@ -55,6 +55,7 @@ func (t *text) joint(p planner.Plan) {
 	t.printf("\n%s  %s\n", p.ID, p.Name)
 	t.printf("  %s\n", Fasteners(p.Joint))
 	t.verdict(p)
+	t.governing(p)
 	t.workBack(p)
 	t.setting(p)
 	t.checks(p)
@@ -103,6 +104,18 @@ func (t *text) verdict(p planner.Plan) {
 			quantity.Trim(p.Angle.SnugTorque), quantity.Trim(p.Angle.FromSnug))
 	}
 	t.printf("  %s\n", t.mark(setting, green))
+}
+
+// governing says which bolt and load case decide what, where the loads are those of
+// the whole joint.
+func (t *text) governing(p planner.Plan) {
+	if len(p.Governing) == 0 {
+		return
+	}
+	t.printf("\n  What governs\n")
+	for _, g := range p.Governing {
+		t.printf("    - %s: bolt %d in load case %s\n", g.For, g.Bolt, g.Case)
+	}
 }
 
 func (t *text) workBack(p planner.Plan) {

@@ -11,7 +11,7 @@ import (
 // jointKeys are the keys of a joint, and so of defaults.
 var jointKeys = []string{
 	"id", "name", "count", "pattern", "bolt", "nut", "tapped", "washers", "clamped", "clamp", "loads", "group",
-	"losses", "temperature", "friction", "tightening", "surfaces", "safety",
+	"eccentric", "losses", "temperature", "friction", "tightening", "surfaces", "safety",
 }
 
 // joint reads one joint, already merged with the defaults.
@@ -49,6 +49,9 @@ func (d *decoder) joint(n *node) planner.Joint {
 	if o.stated("surfaces") {
 		j.Roughness = readSurfaces(o.at("surfaces"))
 	}
+	if o.stated("eccentric") {
+		j.Eccentric = readEccentric(o.at("eccentric"))
+	}
 	if o.stated("safety") {
 		j.Safety = readSafety(o.at("safety"))
 	}
@@ -71,7 +74,7 @@ func isInchThread(designation string) bool {
 }
 
 func readBolt(f field) planner.Bolt {
-	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "hot_modulus", "hot_yield")
+	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "rolled", "hot_modulus", "hot_yield")
 	var b planner.Bolt
 	switch {
 	case !o.require("thread", "M12"):
@@ -87,6 +90,9 @@ func readBolt(f field) planner.Bolt {
 	if o.stated("shank") {
 		shank := o.at("shank").quantity(quantity.Length)
 		b.Shank = &shank
+	}
+	if o.stated("rolled") {
+		b.RolledAfter = o.at("rolled").choice("before heat treatment", "after heat treatment") == "after heat treatment"
 	}
 	b.HotModulus, b.HotYield = o.some("hot_modulus", quantity.Pressure), o.some("hot_yield", quantity.Pressure)
 	if !o.stated("segments") {
