@@ -93,19 +93,31 @@ func (n numbers) placeholder(p string, index int) (string, error) {
 		return n.each(words[1], words[2]), nil
 	}
 	words = strings.Fields(strings.ReplaceAll(p, "#", strconv.Itoa(index)))
-	switch {
-	case p == "i" && index > 0:
-		return strconv.Itoa(index), nil
-	case len(words) == 2 && words[0] == "before" && index > 0:
-		return before(words[1], index), nil
-	case len(words) == 2 && words[0] == "sum" && n[words[1]] > 0:
-		return n.join("+", words[1]), nil
-	case len(words) == 2 && words[0] == "list" && n[words[1]] > 0:
-		return n.join(",", words[1]), nil
-	case len(words) == 3 && words[0] == "opt":
+	if index > 0 {
+		switch {
+		case p == "i":
+			return strconv.Itoa(index), nil
+		case len(words) == 2 && words[0] == "before":
+			return before(words[1], index), nil
+		}
+	}
+	return n.ofSymbols(p, words)
+}
+
+// ofSymbols fills a placeholder that does not rest on the line's own number.
+func (n numbers) ofSymbols(p string, words []string) (string, error) {
+	if len(words) == 3 && words[0] == "opt" {
 		return n.either(words[1], words[2]), nil
-	case len(words) == 3 && words[0] == "products" && n[words[1]] > 0 && n[words[1]] == n[words[2]]:
-		return n.join("+", words[1], words[2]), nil
+	}
+	if len(words) > 1 && n[words[1]] > 0 {
+		switch {
+		case len(words) == 2 && words[0] == "sum":
+			return n.join("+", words[1]), nil
+		case len(words) == 2 && words[0] == "list":
+			return n.join(",", words[1]), nil
+		case len(words) == 3 && words[0] == "products" && n[words[1]] == n[words[2]]:
+			return n.join("+", words[1], words[2]), nil
+		}
 	}
 	return "", fmt.Errorf("the placeholder {%s} cannot be filled", p)
 }
