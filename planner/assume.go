@@ -88,6 +88,12 @@ func (w *work) assumeShank() {
 	if b.Shank != nil || len(b.Segments) > 0 {
 		return
 	}
+	if w.joint.HeadNut != nil {
+		none := 0.0
+		b.Shank = &none
+		w.assumed("shank not stated: the stud is threaded over the whole grip")
+		return
+	}
 	thread := fastener.ReferenceThreadLength(b.Head, b.Thread, b.Length)
 	shank := math.Min(math.Max(b.Length-thread, 0), w.joint.Grip())
 	b.Shank = &shank
@@ -103,14 +109,15 @@ func (w *work) assumeShank() {
 func (w *work) assumeMethod() {
 	j := w.joint
 	w.assumeLoading()
-	w.assumed("the bolt is turned at the head; the other end is held")
+	w.assumed(j.turnedBy())
 	w.assumed("friction: " + j.Friction.Source)
 	if j.Friction.State == "" {
 		w.assumed("lubrication not stated: the friction range holds only for the state it was found with")
 	}
 	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
 	w.assumeHeat()
-	if j.Nut != nil {
+	w.assumeThread()
+	if j.Nut != nil && j.NutClass == "" {
 		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
 	if j.Loads.cyclic() && !j.Bolt.RolledAfter {
@@ -204,4 +211,35 @@ func (j Joint) thinnestPart() float64 {
 		thinnest = math.Min(thinnest, p.Thickness)
 	}
 	return thinnest
+}
+
+// turnedBy says which member is turned, on whose face the torque was reckoned.
+func (j Joint) turnedBy() string {
+	switch {
+	case j.LockNut != nil:
+		return "double nut: the thin nut lies on the part and is held while the thick nut on top of it is turned, which then carries the bolt force (common practice, no source)"
+	case j.HeadNut != nil && j.Tapped != nil:
+		return "the nut of the stud is turned; the stud stays in its thread"
+	case j.HeadNut != nil:
+		return "one nut of the stud is turned; the other is held"
+	}
+	return "the bolt is turned at the head; the other end is held"
+}
+
+// assumeThread says what is taken for granted of the engaged thread.
+func (w *work) assumeThread() {
+	j := w.joint
+	if j.Tapped != nil && j.Tapped.Insert != nil {
+		w.assumed("the insert holds what its maker states, in this material and at this temperature; the bolt's own thread in it is not the weaker one")
+		return
+	}
+	if j.Tapped != nil && j.Tapped.OuterDiameter == 0 {
+		w.assumed("the tapped part is wide enough not to widen under load (1.9 d and more)")
+	}
+	if w.strips() {
+		w.assumed("threads at least material of 6g and 6H")
+	}
+	if j.HeadNut != nil {
+		w.assumed("both ends of the stud have the same thread; the nut on the stud matches its class")
+	}
 }

@@ -88,12 +88,12 @@ func (b Bolt) pieces() []Segment {
 // force at their ends.
 func (w *work) describeFriction() {
 	w.faces = w.joint.bearingFaces()
-	f, n, turned := w.joint.Friction, w.thread, w.faces[0]
+	f, n, turned := w.joint.Friction, w.thread, w.joint.turnedFace(w.faces)
 	w.input("mu_G_min", "least friction in the thread", f.Thread.Low, "-", f.Source)
 	w.input("mu_G_max", "most friction in the thread", f.Thread.High, "-", f.Source)
 	w.input("mu_K_min", "least friction under the head", f.Head.Low, "-", f.Source)
 	w.input("mu_K_max", "most friction under the head", f.Head.High, "-", f.Source)
-	w.input("D_Ka", "outer diameter of the face that turns", turned.outer, "mm", w.joint.Bolt.Head.Source)
+	w.input("D_Ka", "outer diameter of the face that turns", turned.outer, "mm", turned.source)
 	w.input("D_Ki", "inner diameter of the face that turns", turned.inner, "mm", stated)
 	w.line("D_Km", "effective diameter of the friction under the head", (turned.outer+turned.inner)/2, "mm", guideline+"R13")
 	w.line("lead", "lead angle of the thread, tangent", math.Tan(friction.LeadAngle(n.pitch, n.pitchDiameter)), "-",

@@ -110,12 +110,14 @@ func coneMoment(narrow, wide, offset float64) float64 {
 func (w *work) boltBendingCompliance() {
 	j, t := w.joint, w.thread
 	inertia := func(d float64) float64 { return math.Pi / 64 * d * d * d * d }
-	var shank, sum float64
+	var sum float64
 	for _, s := range j.Bolt.pieces() {
-		shank += s.Length
 		sum += s.Length / inertia(s.Diameter)
 	}
-	sum += headLengthOf(j.Bolt.Head)*t.diameter/inertia(t.diameter) + (j.Grip()-shank+stiffness.EngagedThreadLength*t.diameter)/inertia(t.minorDiameter)
+	sum += headLengthOf(j.Bolt.Head)*t.diameter/inertia(t.diameter) + (w.freeThread+stiffness.EngagedThreadLength*t.diameter)/inertia(t.minorDiameter)
+	if j.HeadNut != nil {
+		sum += stiffness.EngagedThreadLength * t.diameter / inertia(t.minorDiameter)
+	}
 	far := stiffness.NutThreadLength * t.diameter / (inertia(t.diameter) * j.Bolt.Class.Modulus)
 	if j.Tapped != nil {
 		far = stiffness.TappedThreadLength * t.diameter / (inertia(t.diameter) * j.Tapped.Material.Modulus)

@@ -22,8 +22,13 @@ type Joint struct {
 
 	Pattern pattern.Pattern // where the bolts sit; zero: not stated
 	Bolt    Bolt
+	HeadNut *fastener.Nut // of a stud: the nut that is turned, in place of a head; nil: a headed bolt
 	Nut     *fastener.Nut // nil when the bolt goes into a tapped part
+	LockNut *fastener.Nut // thin nut between the part and Nut, which is then turned; nil: none
 	Tapped  *Tapped       // nil when there is a nut
+
+	NutClass string  // property class of Nut; empty: not stated
+	NutShear float64 // shear strength of Nut, MPa; 0: not stated, stripping is then not computed
 
 	HeadWasher *fastener.Washer // nil: none
 	NutWasher  *fastener.Washer // nil: none
@@ -84,6 +89,16 @@ type Part struct {
 type Tapped struct {
 	Material fastener.Material
 	Depth    float64 // usable thread depth, mm
+
+	OuterDiameter float64 // of a boss around the thread, mm; 0: not stated, wide enough not to dilate
+	Insert        *Insert // nil: the thread is cut in the part itself
+}
+
+// Insert is a threaded insert with its own strength.
+type Insert struct {
+	Length  float64 // mm
+	PullOut float64 // force that pulls it out of the part, N
+	Source  string
 }
 
 // Clamp is what the joint must still hold in service, per bolt.

@@ -45,9 +45,14 @@ func (w *work) guideEmbedding() float64 {
 	w.input("fz_G", "embedding in the thread", guide.thread, "um", source)
 	w.input("fz_B", "embedding at a bearing face of head or nut", guide.bearingFace, "um", source)
 	w.input("fz_I", "embedding at an inner interface", guide.innerInterface, "um", source)
+	threads := 1.0
+	if w.joint.HeadNut != nil {
+		threads = 2
+		w.input("n_G_thr", "number of engaged threads", threads, "-", "counted")
+	}
 	w.input("n_B", "number of bearing faces", float64(faces), "-", "counted")
 	w.input("n_I", "number of inner interfaces", float64(inner), "-", "counted")
-	total := guide.thread + float64(faces)*guide.bearingFace + float64(inner)*guide.innerInterface
+	total := threads*guide.thread + float64(faces)*guide.bearingFace + float64(inner)*guide.innerInterface
 	return w.line("fz_sum", "embedding", total, "um", guideline+"Table 5")
 }
 

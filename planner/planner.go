@@ -52,6 +52,7 @@ type work struct {
 	boltCompliance    float64 // delta_S
 	clampedCompliance float64 // delta_P
 	layerCompliances  []float64
+	freeThread        float64 // l_Gew, mm
 	loadFactor        float64 // Phi
 
 	tilt              float64 // beta_P, of the parts in bending, 1/(N mm)
@@ -77,6 +78,7 @@ type work struct {
 	thermalGain   float64 // dF_Vth where it is a gain
 	required      float64 // F_Mreq
 
+	shearRatioDown   bool    // r_tau stands in the trace
 	strip            float64 // F_strip of a tapped thread
 	engagementNeeded float64 // with which the bolt breaks before the thread strips
 	tolerated        float64 // F_lim

@@ -72,41 +72,106 @@ func tappedBending(ratio float64) float64 {
 	return 0.728 + 1.769*r - 2.896*r*r + 1.296*r*r*r
 }
 
-// stripping works out the bolt force that strips the thread in the tapped
-// part, F_strip, and the length of engagement with which the bolt would break
-// first. The tapped part is taken as wide enough not to dilate (C_1 = 1).
+// engagement puts down how much thread holds.
+func (w *work) engagement() {
+	j := w.joint
+	w.input("l_b", "length of the bolt under the head; of a stud, its whole length", j.Bolt.Length, "mm", stated)
+	if j.HeadNut != nil {
+		w.input("m_K", "height of the nut in place of the head", j.HeadNut.Height, "mm", j.HeadNut.Source)
+	}
+	if j.Tapped != nil {
+		w.input("t_T", "usable depth of the tapped thread", j.Tapped.Depth, "mm", stated)
+		w.lineBy("l_eng.tapped", "l_eng", "length of engaged thread", j.Engagement(), "mm", arithmetic)
+		return
+	}
+	w.input("m_N", "height of the nut", j.Nut.Height, "mm", j.Nut.Source)
+	w.lineBy("l_eng.nut", "l_eng", "length of engaged thread", j.Engagement(), "mm", arithmetic)
+}
+
+// strips reports whether the force that strips the thread is known: always of a tapped
+// part, of a nut when its shear strength is stated.
+func (w *work) strips() bool { return w.joint.Tapped != nil || w.joint.NutShear > 0 }
+
+// mate is what the bolt's thread is engaged in.
+type mate struct {
+	name     string
+	strength float64 // tau_BM, MPa
+	width    float64 // s or outer diameter, mm; 0: too wide to dilate
+	source   string
+}
+
+func (j Joint) mate() mate {
+	if j.Tapped != nil {
+		return mate{"tapped part", j.Tapped.Material.ShearStrength, j.Tapped.OuterDiameter, j.Tapped.Material.Source}
+	}
+	return mate{"nut", j.NutShear, j.Nut.WidthAcrossFlats, stated}
+}
+
+// dilation returns C_1, what the widening of a nut or boss leaves of the strength:
+// 3.8 s/d - (s/d)^2 - 2.61 from s/d = 1.4 to 1.9, where it is 1. VDI 2230-1:2015 R11,
+// after Alexander, from memory.
+func dilation(ratio float64) float64 {
+	r := math.Min(math.Max(ratio, 1.4), 1.9)
+	return 3.8*r - r*r - 2.61
+}
+
+// stripping works out the bolt force that strips the engaged thread, F_strip, and the
+// length of engagement with which the bolt would break first. An insert holds what its
+// maker states.
 func (w *work) stripping() {
-	j, t := w.joint, w.thread
-	l := limitsOf(t.diameter, t.pitch, t.pitchDiameter, j.Bolt.Thread.NutMinorDiameter())
-	const iso965 = "ISO 965-1, 6H/6g (formulas from memory)"
-	w.line("d_6g", "least thread diameter of the bolt", l.boltMajorMin, "mm", iso965)
-	w.line("d_2_6g", "least pitch diameter of the bolt", l.boltPitchMin, "mm", iso965)
-	w.line("D_2_6H", "largest pitch diameter of the tapped thread", l.nutPitchMax, "mm", iso965)
-	w.lineBy(minorRule(t.pitch), "D_1_6H", "largest minor diameter of the tapped thread", l.nutMinorMax, "mm", iso965)
-	tappedArea := w.line("A_SGM", "shear area of the tapped thread over length",
-		tappedThreadArea(l.boltMajorMin, l.nutPitchMax, l.pitch), "mm", guideline+"R11")
-	boltArea := w.line("A_SGS", "shear area of the bolt thread over length",
-		boltThreadArea(l.boltPitchMin, l.nutMinorMax, l.pitch), "mm", guideline+"R11")
-
-	class, tapped := j.Bolt.Class, j.Tapped.Material
-	w.input("tau_BM", "shear strength of the tapped part", tapped.ShearStrength, "MPa", tapped.Source)
-	w.input("r_tau", "shear strength of the bolt over its tensile strength", class.ShearRatio, "-", class.Source)
+	if w.joint.Tapped != nil && w.joint.Tapped.Insert != nil {
+		i := w.joint.Tapped.Insert
+		w.input("F_strip", "bolt force that pulls the insert out", i.PullOut, "N", i.Source)
+		w.input("l_req", "length of the insert", i.Length, "mm", i.Source)
+		w.strip, w.engagementNeeded = i.PullOut, i.Length
+		return
+	}
+	tappedArea, boltArea := w.shearAreas()
+	j, t, m := w.joint, w.thread, w.joint.mate()
+	class := j.Bolt.Class
+	w.input("tau_BM", "shear strength of the "+m.name, m.strength, "MPa", m.source)
+	w.shearRatio()
 	boltStrength := class.ShearRatio * class.TensileStrength
-	ratio := w.line("R_S", "strength ratio of tapped to bolt thread",
-		tapped.ShearStrength*tappedArea/(boltStrength*boltArea), "-", guideline+"R11")
+	ratio := w.line("R_S", "strength ratio of the "+m.name+"'s thread to the bolt's",
+		m.strength*tappedArea/(boltStrength*boltArea), "-", guideline+"R11")
 	boltFactor := w.line("C_2", "bending factor of the bolt thread", boltBending(ratio), "-", guideline+"R11, from memory")
-	tappedFactor := w.line("C_3", "bending factor of the tapped thread", tappedBending(ratio), "-",
+	tappedFactor := w.line("C_3", "bending factor of the "+m.name+"'s thread", tappedBending(ratio), "-",
 		guideline+"R11, from memory")
-
-	perLength := w.line("q_strip", "stripping force over length of engagement",
-		math.Min(tappedFactor*tapped.ShearStrength*tappedArea, boltFactor*boltStrength*boltArea), "N/mm", guideline+"R11")
-	w.input("l_b", "length of the bolt under the head", j.Bolt.Length, "mm", stated)
-	w.input("t_T", "usable depth of the tapped thread", j.Tapped.Depth, "mm", stated)
-	w.lineBy("l_eng.tapped", "l_eng", "length of engaged thread", j.Engagement(), "mm", arithmetic)
+	perLength := math.Min(tappedFactor*m.strength*tappedArea, boltFactor*boltStrength*boltArea)
+	if m.width > 0 {
+		w.input("w_M", "width of the "+m.name+" around the thread", m.width, "mm", m.source)
+		perLength *= w.line("C_1", "factor of the widening of the "+m.name, dilation(m.width/t.diameter), "-", guideline+"R11, from memory")
+	}
+	w.line("q_strip", "stripping force over length of engagement", perLength, "N/mm", guideline+"R11")
 	effective := math.Max(0, j.Engagement()-0.8*t.pitch)
 	w.strip = w.line("F_strip", "bolt force that strips the thread", perLength*effective, "N", guideline+"R11")
 	w.engagementNeeded = w.line("l_req", "engagement with which the bolt breaks first",
 		class.TensileStrength*t.stressArea/perLength+0.8*t.pitch, "mm", guideline+"R11")
+}
+
+// shearAreas puts down the shear areas of both threads per length of engagement, at
+// least material.
+func (w *work) shearAreas() (tapped, bolt float64) {
+	t := w.thread
+	l := limitsOf(t.diameter, t.pitch, t.pitchDiameter, w.joint.Bolt.Thread.NutMinorDiameter())
+	const iso965 = "ISO 965-1, 6H/6g (formulas from memory)"
+	w.line("d_6g", "least thread diameter of the bolt", l.boltMajorMin, "mm", iso965)
+	w.line("d_2_6g", "least pitch diameter of the bolt", l.boltPitchMin, "mm", iso965)
+	w.line("D_2_6H", "largest pitch diameter of the internal thread", l.nutPitchMax, "mm", iso965)
+	w.lineBy(minorRule(t.pitch), "D_1_6H", "largest minor diameter of the internal thread", l.nutMinorMax, "mm", iso965)
+	tapped = w.line("A_SGM", "shear area of the internal thread over length",
+		tappedThreadArea(l.boltMajorMin, l.nutPitchMax, l.pitch), "mm", guideline+"R11")
+	bolt = w.line("A_SGS", "shear area of the bolt thread over length",
+		boltThreadArea(l.boltPitchMin, l.nutMinorMax, l.pitch), "mm", guideline+"R11")
+	return tapped, bolt
+}
+
+// shearRatio puts down tau_B/R_m of the bolt, once.
+func (w *work) shearRatio() {
+	if !w.shearRatioDown {
+		w.shearRatioDown = true
+		w.input("r_tau", "shear strength of the bolt over its tensile strength", w.joint.Bolt.Class.ShearRatio, "-", w.joint.Bolt.Class.Source)
+	}
 }
 
 func minorRule(pitch float64) string {

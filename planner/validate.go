@@ -80,7 +80,7 @@ func (v *validator) identity(j Joint) {
 func (v *validator) bolt(b Bolt) {
 	thread := b.Thread.Diameter
 	v.require(thread > 0, at("bolt.thread"), "state the thread, for example M12", "no thread is stated")
-	v.require(b.Head.BearingDiameter > 0, at("bolt.head", "bolt.thread"), "state the head, for example hexagon",
+	v.require(b.Head.BearingDiameter > 0, at("bolt.head", "bolt.thread", "nut"), "state the head, for example hexagon",
 		"no head is stated")
 	v.require(b.Class.YieldStrength > 0, at("bolt.property_class", "bolt.thread"), "state the property class, for example 8.8",
 		"no property class is stated")
@@ -104,7 +104,8 @@ func (v *validator) ends(j Joint) {
 		"add nut: hexagon, or tapped: {material: S355, depth: 24 mm}", "neither nut nor tapped is stated") {
 		return
 	}
-	v.require(j.Nut == nil || j.Tapped == nil, at("tapped", "nut"), "keep one of them", "both nut and tapped are stated")
+	v.require(j.Nut == nil || j.Tapped == nil, at("tapped", "nut", "bolt.head"), "keep one of them, or state head: stud", "both nut and tapped are stated")
+	v.nuts(j)
 	if j.Tapped == nil {
 		v.require(j.Nut.Height > 0 && j.Nut.BearingDiameter > 0, at("nut", "bolt.thread"), "state the nut, for example hexagon",
 			"the nut has no height or no bearing face")
@@ -112,6 +113,7 @@ func (v *validator) ends(j Joint) {
 	}
 	v.require(j.NutWasher == nil || j.Nut != nil, at("washers.nut", "nut"),
 		"remove it, or state washers: {nut: none} where defaults have one", "a nut washer is stated, but there is no nut")
+	v.tapped(j)
 	v.positive(j.Tapped.Depth, lengths, at("tapped.depth"), "the thread depth", "state the usable depth of the thread")
 }
 
@@ -139,8 +141,10 @@ func (v *validator) materials(j Joint) {
 	}
 	if j.Tapped != nil {
 		v.material(j.Tapped.Material, at("tapped.material."))
-		v.positive(j.Tapped.Material.ShearStrength, pressures, at("tapped.material.shear_strength"),
-			"the shear strength of the tapped part", noStrength)
+		if j.Tapped.Insert == nil {
+			v.positive(j.Tapped.Material.ShearStrength, pressures, at("tapped.material.shear_strength"),
+				"the shear strength of the tapped part", noStrength)
+		}
 	}
 }
 

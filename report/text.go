@@ -75,6 +75,12 @@ func Fasteners(j planner.Joint) string {
 	if j.NutWasher != nil {
 		parts = append(parts, "washer "+j.NutWasher.Standard+" under the nut")
 	}
+	if j.HeadNut != nil {
+		parts = append(parts, j.HeadNut.Kind+" nut "+j.HeadNut.Standard+" to turn")
+	}
+	if j.LockNut != nil {
+		parts = append(parts, j.LockNut.Kind+" nut "+j.LockNut.Standard+" below")
+	}
 	if j.Nut != nil {
 		parts = append(parts, j.Nut.Kind+" nut "+j.Nut.Standard)
 	} else {
@@ -86,7 +92,11 @@ func Fasteners(j planner.Joint) string {
 // Bolt describes one bolt: thread, length, head, class.
 func Bolt(j planner.Joint) string {
 	b := j.Bolt
-	text := fmt.Sprintf("%s x %g %s %s, class %s", b.Thread.Designation, b.Length, b.Head.Kind, b.Head.Standard, b.Class.Name)
+	head := b.Head.Kind
+	if j.HeadNut == nil {
+		head += " " + b.Head.Standard
+	}
+	text := fmt.Sprintf("%s x %g %s, class %s", b.Thread.Designation, b.Length, head, b.Class.Name)
 	if waist := b.Waist(); waist > 0 {
 		text += fmt.Sprintf(", reduced shank %g mm", waist)
 	}

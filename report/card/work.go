@@ -17,8 +17,8 @@ func (d *document) steps(p planner.Plan) []item {
 		items = append(items, item{text: say("step_lubricate")})
 	}
 	items = append(items, item{text: say("step_hand")})
-	if p.Joint.Nut != nil {
-		items = append(items, item{text: say("step_hold")})
+	if key := held(p.Joint); key != "" {
+		items = append(items, item{text: say(key)})
 	}
 	first := item{lead: say("step_set", "torque", snug), text: say("step_snug")}
 	switch {
@@ -38,6 +38,22 @@ func (d *document) steps(p planner.Plan) []item {
 		items[i].mark = strconv.Itoa(i + 1)
 	}
 	return items
+}
+
+// held names the step that says what is held and what is turned; none where a bolt
+// goes into a tapped part.
+func held(j planner.Joint) string {
+	switch {
+	case j.HeadNut != nil && j.Tapped != nil:
+		return "step_stud_tapped"
+	case j.HeadNut != nil:
+		return "step_stud_through"
+	case j.LockNut != nil:
+		return "step_lock"
+	case j.Nut != nil:
+		return "step_hold"
+	}
+	return ""
 }
 
 // inwards prints the ends of a range rounded inwards, to the coarsest of the
