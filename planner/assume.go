@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"clampback/planner/fastener"
+	"clampback/planner/quantity"
 )
 
 // What is taken when the register is silent. Each use is printed.
@@ -68,7 +69,7 @@ func (w *work) assumeLoads() {
 		w.assumed("no axial load, so the load introduction factor has no effect: 1 is shown")
 	}
 	if j.Temperature == nil {
-		j.Temperature = &Temperature{Assembly: roomTemperature}
+		j.Temperature = &Temperature{Assembly: quantity.Single(roomTemperature)}
 		j.Temperature.Service.Low, j.Temperature.Service.High = roomTemperature, roomTemperature
 		w.assumed("temperature not stated: service at the temperature of assembly, 20 degC")
 	}

@@ -82,7 +82,7 @@ func TestOpeningForceLeavesTheEdgeAtNothing(t *testing.T) {
 		force := line(t, p, "F_KA")
 		hole := math.Pi / 4 * 13.5 * 13.5
 		area := 34*34 - hole
-		inertia := math.Pow(34, 4)/12 - math.Pi/64*math.Pow(13.5, 4) - hole*s*s
+		inertia := math.Pow(34, 4)/12 - hole*13.5*13.5/16 - hole*s*s
 		edge := func(u float64) float64 {
 			tilt := force*s - (j.Loads.Axial.High*(a-s) + j.Eccentric.MomentHigh)
 			return force/area + tilt*u/inertia
@@ -126,7 +126,7 @@ func TestBendingStressIsTheGuidelines(t *testing.T) {
 	const modulus = 205e3 // of bolt and parts
 	replacement := line(t, p, "beta_S") * modulus * math.Pi / 64 * math.Pow(dS, 4)
 	sigma := phi * 9500 / 2 / area
-	bent := sigma * (1 + (1/phi-2.0/15)*j.Grip()/replacement*math.Pi*15*math.Pow(dS, 3)/(8*line(t, p, "I_Bers")))
+	bent := sigma * (1 + (1/phi-2.0/15)*j.Grip()/replacement*math.Pi*15*dS*dS*dS/(8*line(t, p, "I_Bers")))
 	assert.InEpsilon(t, bent, line(t, p, "sigma_ab"), 1e-9)
 }
 

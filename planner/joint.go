@@ -155,7 +155,7 @@ type Closing struct {
 // Temperature is the temperature of the joint: one Service range that bolt and
 // parts share, or States in which they differ.
 type Temperature struct {
-	Assembly float64        // degC
+	Assembly quantity.Range // degC, of bolt and parts while they are tightened
 	Service  quantity.Range // degC; without States
 	States   []ThermalState
 }

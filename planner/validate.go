@@ -216,8 +216,8 @@ func (v *validator) temperature(t *Temperature) {
 		v.require(possible(s.Parts), itemOf("temperature.states", i, "parts"), "state -273.15 to 1000 degC",
 			"%g degC is impossible", s.Parts)
 	}
-	v.require(possible(t.Assembly), at("temperature.assembly"), "state -273.15 to 1000 degC",
-		"%g degC is impossible", t.Assembly)
+	v.require(possible(t.Assembly.Low) && possible(t.Assembly.High) && t.Assembly.Low <= t.Assembly.High, at("temperature.assembly"),
+		"state -273.15 to 1000 degC, low end first", "%g to %g degC is impossible", t.Assembly.Low, t.Assembly.High)
 	v.require(possible(t.Service.Low) && possible(t.Service.High) && t.Service.Low <= t.Service.High,
 		at("temperature.service"), "state -273.15 to 1000 degC, low end first",
 		"%g to %g degC is impossible", t.Service.Low, t.Service.High)

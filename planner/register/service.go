@@ -133,7 +133,7 @@ func readTemperature(f field) *planner.Temperature {
 	o := f.object("assembly", "service", "states")
 	var t planner.Temperature
 	if o.require("assembly", "20 degC") {
-		t.Assembly = o.at("assembly").quantity(quantity.Temperature)
+		t.Assembly = o.at("assembly").span(quantity.Temperature)
 	}
 	if o.stated("states") {
 		if o.stated("service") {
