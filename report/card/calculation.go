@@ -39,9 +39,19 @@ func (d *document) twoLists(p planner.Plan) block {
 		{"+ " + say("calc_relief"), kilo(quantity.RoundUp(b.LoadRelief, 10))},
 		{"+ " + say("calc_embedding"), kilo(quantity.RoundUp(b.EmbeddingLoss, 10))},
 		{"+ " + say("calc_thermal"), kilo(quantity.RoundUp(b.ThermalLoss, 10))},
+	}
+	for _, loss := range []struct {
+		key    string
+		newton float64
+	}{{"calc_closing", b.ClosingLoss}, {"calc_softening", b.SofteningLoss}, {"calc_relaxation", b.RelaxationLoss}} {
+		if loss.newton > 0 {
+			rows = append(rows, [2]string{"+ " + say(loss.key), kilo(quantity.RoundUp(loss.newton, 10))})
+		}
+	}
+	rows = append(rows, [][2]string{
 		{"= " + say("calc_required"), kilo(quantity.RoundUp(b.RequiredPreload, 10))},
 		{say("calc_limit"), kilo(quantity.RoundDown(p.Preload.Limit, 10))},
-	}
+	}...)
 	setting := d.newList(say("calc_setting"), plainItems(d.settingLines(p)), half, d.small())
 	line := d.mm(smallSize) * lineHeight
 	head := d.mm(smallSize) * headingHeight
