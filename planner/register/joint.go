@@ -3,7 +3,6 @@ package register
 import (
 	"errors"
 	"slices"
-	"strings"
 
 	"clampback/planner"
 	"clampback/planner/fastener"
@@ -67,22 +66,10 @@ func (d *decoder) joint(n *node) planner.Joint {
 	return j
 }
 
-// isInchThread reports whether a designation is one of a unified thread: "1/2-13
-// UNC", "#8-32", "3/4-16".
-func isInchThread(designation string) bool {
-	size, rest, found := strings.Cut(designation, "-")
-	return strings.Contains(designation, "UN") ||
-		(found && rest != "" && strings.Trim(size, "#0123456789/ ") == "" && size != "")
-}
-
 func readBolt(f field) planner.Bolt {
 	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "rolled", "hot_modulus", "hot_yield")
 	var b planner.Bolt
-	switch {
-	case !o.require("thread", "M12"):
-	case isInchThread(o.word("thread")):
-		o.at("thread").wrong("inch threads are not planned by this version", "state an ISO metric thread, for example M12")
-	default:
+	if o.require("thread", "M12") {
 		b.Thread = lookUp(o.at("thread"), fastener.ParseThread)
 	}
 	if o.require("length", "60 mm") {
