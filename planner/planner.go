@@ -102,7 +102,22 @@ type work struct {
 }
 
 func newWork(joint Joint) *work {
-	return &work{joint: joint, trace: make([]Line, 0, 224), checks: make([]Check, 0, 16)}
+	return &work{joint: joint, trace: make([]Line, 0, linesOf(joint)), checks: make([]Check, 0, 16)}
+}
+
+// linesOf estimates how many lines the trace of a joint has, so that it grows once.
+func linesOf(j Joint) int {
+	lines := 192
+	if len(j.Group) > 0 {
+		lines += 96
+	}
+	if j.Eccentric != nil {
+		lines += 24
+	}
+	if j.Temperature != nil {
+		lines += len(j.Temperature.States) * (len(j.Parts) + 10)
+	}
+	return lines + 5*len(j.Loads.Spectrum)
 }
 
 // plan gathers the record.

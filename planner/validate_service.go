@@ -7,7 +7,10 @@ import (
 
 func (v *validator) safety(s Safety) {
 	factor := func(value float64, field string) {
-		v.require(value == 0 || (value >= 1 && value <= 100), at("safety."+field),
+		if value == 0 {
+			return
+		}
+		v.require(value >= 1 && value <= 100, at("safety."+field),
 			"state a factor of 1 or more, for example 1.2, or leave it out", "the safety factor is %g", value)
 	}
 	factor(s.Slip, "slip")
