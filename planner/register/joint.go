@@ -70,7 +70,7 @@ func readBolt(f field) planner.Bolt {
 	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "rolled", "hot_modulus", "hot_yield")
 	var b planner.Bolt
 	if o.require("thread", "M12") {
-		b.Thread = lookUp(o.at("thread"), fastener.ParseThread)
+		b.Thread = lookUp(o.at("thread"), o.d.library.findThread)
 	}
 	if o.require("length", "60 mm") {
 		b.Length = o.at("length").quantity(quantity.Length)
@@ -111,7 +111,7 @@ func readHead(o *object, b *planner.Bolt) {
 	}
 	if hasHead {
 		b.Head = lookUp(o.at("head"), func(kind string) (fastener.Head, error) {
-			head, err := fastener.FindHead(kind, b.Thread)
+			head, err := o.d.library.findHead(kind, b.Thread)
 			var unknown *fastener.UnknownError
 			if errors.As(err, &unknown) {
 				unknown.Known = append(slices.Clone(unknown.Known), "stud")
@@ -121,7 +121,7 @@ func readHead(o *object, b *planner.Bolt) {
 	}
 	if hasClass {
 		b.Class = lookUp(o.at("property_class"), func(name string) (fastener.PropertyClass, error) {
-			return fastener.FindClass(name, b.Thread)
+			return o.d.library.findClass(name, b.Thread)
 		})
 	}
 }
@@ -161,7 +161,7 @@ func readEnds(o *object, j *planner.Joint) {
 		}
 		w := &fastener.Washer{}
 		if sized {
-			*w = lookUp(washers.at(key), func(name string) (fastener.Washer, error) { return fastener.FindWasher(name, t) })
+			*w = lookUp(washers.at(key), func(name string) (fastener.Washer, error) { return o.d.library.findWasher(name, t) })
 		}
 		return w
 	}
@@ -179,7 +179,7 @@ func readNut(f field, j *planner.Joint, sized bool) {
 	find := func(f field) *fastener.Nut {
 		n := &fastener.Nut{}
 		if sized {
-			*n = lookUp(f, func(kind string) (fastener.Nut, error) { return fastener.FindNut(kind, t) })
+			*n = lookUp(f, func(kind string) (fastener.Nut, error) { return f.d.library.findNut(kind, t) })
 		}
 		return n
 	}
@@ -255,7 +255,7 @@ func readParts(f field) []planner.Part {
 // readMaterial reads a name of the library or a mapping of properties.
 func readMaterial(f field) fastener.Material {
 	if f.node.kind != mapping {
-		return lookUp(f, fastener.FindMaterial)
+		return lookUp(f, f.d.library.findMaterial)
 	}
 	o := f.object("modulus", "bearing_pressure", "expansion", "shear_strength", "tensile_strength")
 	o.require("modulus", "205 GPa")

@@ -49,7 +49,10 @@ type header struct {
 	assembly   string
 	revision   string
 	preparedBy string
-	defaults   *node
+	library    *library
+	// libraryLost: not all of it could be read, so a name that is not found may be in it
+	libraryLost bool
+	defaults    *node
 }
 
 func readSource(in Source) ([]located, []Problem) {
@@ -91,10 +94,16 @@ func readHeader(d *decoder, top *node, cut bool) (header, []field) {
 		}
 		return header{defaults: unknown}, nil
 	}
-	o := field{d, top, "the register", ""}.object("assembly", "revision", "prepared_by", "defaults", "joints")
+	o := field{d, top, "the register", ""}.object("assembly", "revision", "prepared_by", "library", "defaults", "joints")
 	h := header{revision: o.label("revision"), preparedBy: o.label("prepared_by")}
 	if o.require("assembly", "the machine the joints belong to") {
 		h.assembly = o.at("assembly").label()
+	}
+	if o.stated("library") {
+		h.library = readLibraries(o.at("library"))
+	}
+	if h.libraryLost = !d.knows("library"); h.libraryLost {
+		h.library = nil // joints that rest on it are not judged by what is left of it
 	}
 	switch {
 	case slices.Contains(d.unread, "defaults"): // most likely misspelt
@@ -148,7 +157,7 @@ func readChunk(s *source, h header, c chunk) jointResult {
 // readJoint reads one joint and judges it by the rules that rest on nothing
 // unread.
 func readJoint(s *source, h header, own *node) jointResult {
-	d := &decoder{problems: &problems{source: s}}
+	d := &decoder{problems: &problems{source: s}, library: h.library, libraryLost: h.libraryLost}
 	whole := field{d, own, "a joint", ""}
 	if !whole.is(mapping, "write it as - id: A-010, with its other keys below") {
 		return jointResult{problems: d.all}
