@@ -19,7 +19,7 @@ func (d *document) calculation(p planner.Plan) []block {
 	if !p.Feasible {
 		blocks = append(blocks, d.paragraph(say("calc_infeasible"), bold(figure.Type{Size: d.mm(titleSize)})))
 	}
-	height := d.mm(58)
+	height := d.mm(72)
 	diagram := block{height: height, draw: func(y float64) {
 		figure.JointDiagram(d.canvas, p, figure.Box{X: d.left(), Y: y, Width: d.wide(), Height: height}, say)
 	}}
