@@ -9,6 +9,7 @@ import (
 var (
 	thin   = Stroke{Width: 0.2}
 	medium = Stroke{Width: 0.35}
+	bold   = Stroke{Width: 0.5}
 	heavy  = Stroke{Width: 0.7}
 	dotted = Stroke{Width: 0.2, Dash: []float64{0.6, 0.6}}
 	dashed = Stroke{Width: 0.5, Dash: []float64{3, 1}}
@@ -19,6 +20,7 @@ var (
 type axes struct {
 	c     Canvas
 	plot  Box
+	room  float64 // left of the plot for the numbers, mm
 	size  float64 // of the type, mm
 	left  float64
 	right float64
@@ -46,15 +48,15 @@ func (a axes) frame(scaleX, scaleY float64, titleX, titleY string) {
 	for _, y := range roundSteps(a.low*scaleY, a.high*scaleY, a.plot.Height/(3*a.size)) {
 		p := a.at(a.left, y/scaleY)
 		a.c.Line(p.X-tick, p.Y, p.X, p.Y, thin)
-		a.c.Text(p.X-1.5*tick, p.Y+a.size*0.36, minus(y), Type{Size: a.size, Anchor: End})
+		a.c.Text(p.X-1.5*tick, p.Y+a.size*0.36, minus(y), fitted(a.c, minus(y), a.room-1.5*tick, Type{Size: a.size, Anchor: End}))
 	}
 	for _, x := range roundSteps(a.left*scaleX, a.right*scaleX, a.plot.Width/(4.5*a.size)) {
-		p := a.at(x/scaleX, a.low)
-		a.c.Line(p.X, p.Y, p.X, p.Y+tick, thin)
-		t := Type{Size: a.size, Anchor: Middle}
-		if p.X+a.c.Width(minus(x), t)/2 < right+0.1*a.size {
-			a.c.Text(p.X, p.Y+1.4*tick+a.size, minus(x), t)
+		p, t := a.at(x/scaleX, a.low), Type{Size: a.size, Anchor: Middle}
+		if p.X+a.c.Width(minus(x), t)/2 > right+0.1*a.size {
+			continue // no room for the number
 		}
+		a.c.Line(p.X, p.Y, p.X, p.Y+tick, thin)
+		a.c.Text(p.X, p.Y+1.4*tick+a.size, minus(x), t)
 	}
 	richText(a.c, a.plot.X-1.5*tick, a.plot.Y-0.55*a.size, titleY, Type{Size: a.size})
 	richText(a.c, right, bottom+3*a.size, titleX, Type{Size: a.size, Anchor: End})

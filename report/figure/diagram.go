@@ -65,7 +65,7 @@ func newDiagram(c Canvas, d stiffness.Diagram, box Box, say Words) *diagram {
 	side := 0.43 * box.Width
 	g := &diagram{
 		axes: axes{
-			c: c, size: size,
+			c: c, size: size, room: left,
 			plot: Box{box.X + left, box.Y + above, box.Width - left - side - 1.5*size, box.Height - above - below},
 		},
 		say: say, d: d,
@@ -78,15 +78,10 @@ func newDiagram(c Canvas, d stiffness.Diagram, box Box, say Words) *diagram {
 		top = math.Max(top, math.Max(s.Bolt, s.Clamp))
 		reach = math.Max(reach, s.Length)
 	}
-	g.widen(1.04*reach, compression.Length, tension.Length)
-	g.high = 1.06 * top
 	// A joint of nothing is drawn on empty axes.
-	if g.high <= 0 {
-		g.high = 1
-	}
-	if g.right <= g.left {
-		g.right = g.left + 1
-	}
+	const leastForce, leastLength = 1e-3, 1e-6 // N, mm
+	g.widen(math.Max(1.04*reach, leastLength), compression.Length, tension.Length)
+	g.high = math.Max(1.06*top, leastForce)
 	return g
 }
 
@@ -243,7 +238,7 @@ func (g *diagram) shares(preload float64, s stiffness.State, load, column float6
 		from, to := g.at(s.Length, preload), p
 		from.X += sharesColumn * column
 		to.X = from.X
-		g.arrowOnPage(from, to, Stroke{Width: 0.5})
+		g.arrowOnPage(from, to, bold)
 	}
 	g.line(s.Length, s.Clamp, s.Length, s.Bolt, dotted)
 	middle := g.span(s.Length, s.Clamp, s.Bolt, loadColumn*column)

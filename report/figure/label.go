@@ -72,6 +72,14 @@ func richWidth(c Canvas, label string, t Type) float64 {
 	return width
 }
 
+// fitted shrinks type so that a label keeps within a width.
+func fitted(c Canvas, label string, width float64, t Type) Type {
+	if w := richWidth(c, label, t); w > width {
+		t.Size *= width / w
+	}
+	return t
+}
+
 // richText prints a label with subscripts.
 func richText(c Canvas, x, y float64, label string, t Type) {
 	switch t.Anchor {
@@ -122,11 +130,7 @@ func notes(c Canvas, all []note, column Box, size float64) {
 		if n.dot {
 			c.Circle(n.at.X, n.at.Y, 0.16*size, 0, Stroke{})
 		}
-		t := Type{Size: size}
-		if w := richWidth(c, n.text, t); w > column.Width {
-			t.Size *= column.Width / w
-		}
-		richText(c, column.X, y+0.36*size, n.text, t)
+		richText(c, column.X, y+0.36*size, n.text, fitted(c, n.text, column.Width, Type{Size: size}))
 	}
 }
 

@@ -128,7 +128,7 @@ func boxOf(text string, x, y, size float64, get map[string]string) label {
 // assertTidy fails where a label leaves the frame, runs into another or is struck
 // through, and where a line, a dot or a filled area leaves the frame.
 func assertTidy(t require.TestingT, d drawing, width, height float64) {
-	const edge = 1e-3 // mm: the rounding of the SVG
+	const edge = 0.01 // mm: the rounding of the SVG, of type sizes over a label
 	inside := func(p figure.Point) bool {
 		return p.X >= -edge && p.Y >= -edge && p.X <= width+edge && p.Y <= height+edge
 	}
