@@ -2,7 +2,7 @@
 # make test   every test, fetching the programs that tests check against
 # make bench  speed and memory
 GO ?= go
-DEMO = testdata/demo/tarn40.yaml
+DEMO = testdata/demo/tarn40.yaml testdata/demo/tarn40-pipework.yaml
 
 .PHONY: build demo test tools lint bench fuzz clean
 

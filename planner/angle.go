@@ -7,7 +7,7 @@ import "math"
 func (w *work) anglePerForce() float64 {
 	w.input("eps", "relative uncertainty of the compliances", w.joint.Tightening.ElasticSpread, "-", stated)
 	return w.line("c_ang", "angle per clamp force",
-		360/w.thread.pitch*(w.boltCompliance+w.clampedCompliance), "deg/N", "thread geometry and "+guideline+"5.1")
+		360/w.thread.pitch*(w.boltCompliance+math.Max(w.clampedCompliance, w.eccentricClamping)), "deg/N", "thread geometry and "+guideline+"5.1")
 }
 
 // monitoringAngle works out the angle that torque control turns from snug to

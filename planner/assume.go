@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"clampback/planner/fastener"
+	"clampback/planner/quantity"
 )
 
 // What is taken when the register is silent. Each use is printed.
@@ -62,20 +63,20 @@ func (w *work) assume() {
 
 func (w *work) assumeLoads() {
 	j := &w.joint
-	if j.Loads.IntroductionFactor == nil {
+	if j.Loads.IntroductionFactor == nil && j.Loads.Introduction == nil {
 		none := 1.0
 		j.Loads.IntroductionFactor = &none
 		w.assumed("no axial load, so the load introduction factor has no effect: 1 is shown")
 	}
 	if j.Temperature == nil {
-		j.Temperature = &Temperature{Assembly: roomTemperature}
+		j.Temperature = &Temperature{Assembly: quantity.Single(roomTemperature)}
 		j.Temperature.Service.Low, j.Temperature.Service.High = roomTemperature, roomTemperature
 		w.assumed("temperature not stated: service at the temperature of assembly, 20 degC")
 	}
-	if j.Loads.Cycles == 0 && j.Loads.Axial.Width() > 0 {
+	if !j.Loads.cyclic() && (j.Loads.Axial.Width() > 0 || len(j.Group) > 0) {
 		w.assumed("load cycles not stated: the axial load is taken as static and fatigue is not checked")
 	}
-	if j.Clamp.slips() && j.Clamp.Interfaces == 0 {
+	if j.slips() && j.Clamp.Interfaces == 0 {
 		j.Clamp.Interfaces = 1
 		w.assumed("number of slip faces not stated: 1")
 	}
@@ -86,6 +87,12 @@ func (w *work) assumeLoads() {
 func (w *work) assumeShank() {
 	b := &w.joint.Bolt
 	if b.Shank != nil || len(b.Segments) > 0 {
+		return
+	}
+	if w.joint.HeadNut != nil {
+		none := 0.0
+		b.Shank = &none
+		w.assumed("shank not stated: the stud is threaded over the whole grip")
 		return
 	}
 	thread := fastener.ReferenceThreadLength(b.Head, b.Thread, b.Length)
@@ -102,18 +109,22 @@ func (w *work) assumeShank() {
 // assumeMethod says what the method takes for granted in every joint.
 func (w *work) assumeMethod() {
 	j := w.joint
-	w.assumed("loaded and clamped concentrically; loads are per bolt and need no further factor")
-	w.assumed("the bolt is turned at the head; the other end is held")
+	w.assumeLoading()
+	w.assumed(j.turnedBy())
 	w.assumed("friction: " + j.Friction.Source)
 	if j.Friction.State == "" {
 		w.assumed("lubrication not stated: the friction range holds only for the state it was found with")
 	}
+	for _, c := range j.Bolt.Class.Cautions() {
+		w.assumed("caution: " + c.Text + " (" + c.Source + ", from memory)")
+	}
 	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
 	w.assumeHeat()
-	if j.Nut != nil {
-		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
+	w.assumeThread()
+	if j.Nut != nil && j.NutClass == "" {
+		w.assumed(fmt.Sprintf("the nut matches the bolt (class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
-	if j.Loads.Cycles > 0 {
+	if j.Loads.cyclic() && !j.Bolt.RolledAfter {
 		w.assumed("thread rolled before heat treatment (the lower fatigue limit)")
 	}
 	if j.Tightening.Scatter == GuideScatter {
@@ -135,7 +146,7 @@ func (w *work) assumeSafety() {
 		recommended(&s.Slip, "against slip not stated: 1 (VDI 2230-1 recommends 1.2, 1.8 for alternating loads)")
 		recommended(&s.Shear, "against shear after slip not stated: 1 (VDI 2230-1 recommends 1.1)")
 	}
-	if w.joint.Loads.Cycles > 0 {
+	if w.joint.Loads.cyclic() {
 		recommended(&s.Fatigue, "against fatigue not stated: 1 (VDI 2230-1 recommends 1.2)")
 	}
 	recommended(&s.Yield, "against yield in service, bearing pressure and stripping: 1 where not stated (VDI 2230-1: 1.0)")
@@ -164,5 +175,79 @@ func (w *work) assumeHeat() {
 	}
 	if lowest < roomTemperature-40 {
 		w.assumed("toughness in the cold is not judged: properties below 20 degC are taken as at 20 degC")
+	}
+}
+
+// assumeLoading says how the bolt is taken to be loaded.
+func (w *work) assumeLoading() {
+	j := w.joint
+	if e := j.Eccentric; e != nil {
+		w.assumed("eccentric: the parts bend as one body about the stated axis, and what a working moment adds to the clamp is not counted on")
+		limit := math.Min(j.Bolt.Head.BearingDiameter, j.bearingOfNut()) + j.thinnestPart()
+		if e.Depth > limit {
+			w.assumed(fmt.Sprintf("the interface is %.4g mm deep, more than d_W + h = %.4g mm, for which the guideline's eccentric formulas hold: check by other means", e.Depth, limit))
+		}
+	} else {
+		w.assumed("loaded and clamped concentrically; loads need no further factor")
+	}
+	switch {
+	case len(j.GroupLoads) > 0:
+		w.assumed("rigid plates share the loads on the joint over bolts of equal stiffness (VDI 2230-2): where the plates bend, state bolt forces of a finite-element run")
+	case len(j.Group) > 0:
+		w.assumed("bolt forces are those of the finite-element run, taken as operating loads of the bolts without preload")
+	}
+	if len(j.Group) > 0 && j.Loads.cyclic() {
+		w.assumed("each bolt swings between its load cases, and the unloaded joint")
+	}
+}
+
+// bearingOfNut returns d_W at the far end; that of the head where there is no nut.
+func (j Joint) bearingOfNut() float64 {
+	if j.Nut == nil {
+		return j.Bolt.Head.BearingDiameter
+	}
+	return j.Nut.BearingDiameter
+}
+
+func (j Joint) thinnestPart() float64 {
+	thinnest := math.Inf(1)
+	for _, p := range j.Parts {
+		thinnest = math.Min(thinnest, p.Thickness)
+	}
+	return thinnest
+}
+
+// turnedBy says which member is turned, on whose face the torque was reckoned.
+func (j Joint) turnedBy() string {
+	switch {
+	case j.LockNut != nil:
+		return "double nut: the thin nut lies on the part and is held while the thick nut on top of it is turned, which then carries the bolt force (common practice, no source)"
+	case j.HeadNut != nil && j.Tapped != nil:
+		return "the nut of the stud is turned; the stud stays in its thread"
+	case j.HeadNut != nil:
+		return "one nut of the stud is turned; the other is held"
+	}
+	return "the bolt is turned at the head; the other end is held"
+}
+
+// assumeThread says what is taken for granted of the engaged thread.
+func (w *work) assumeThread() {
+	j := w.joint
+	if j.Tapped != nil && j.Tapped.Insert != nil {
+		w.assumed("the insert holds what its maker states, in this material and at this temperature; the bolt's own thread in it is not the weaker one")
+		return
+	}
+	if j.Tapped != nil && j.Tapped.OuterDiameter == 0 {
+		w.assumed("the tapped part is wide enough not to widen under load (1.9 d and more)")
+	}
+	if w.strips() {
+		classes := "6g and 6H"
+		if j.Bolt.Thread.Inch {
+			classes = "2A and 2B"
+		}
+		w.assumed("threads at least material of " + classes)
+	}
+	if j.HeadNut != nil {
+		w.assumed("both ends of the stud have the same thread; the nut on the stud matches its class")
 	}
 }

@@ -47,11 +47,15 @@ func (w *work) describeThread() {
 	t := w.joint.Bolt.Thread
 	n := &w.thread
 	n.diameter, n.pitch = t.Diameter, t.Pitch
-	w.input("d", "thread diameter", t.Diameter, "mm", "ISO 261")
-	w.input("P", "pitch", t.Pitch, "mm", "ISO 261")
-	n.pitchDiameter = w.line("d_2", "pitch diameter", t.PitchDiameter(), "mm", iso724)
-	n.minorDiameter = w.line("d_3", "minor diameter", t.MinorDiameter(), "mm", "ISO 68-1")
-	n.stressArea = w.line("A_S", "stress area of the thread", t.StressArea(), "mm2", iso898)
+	series, basic, stress, inch := "ISO 261", iso724, iso898, ""
+	if t.Inch {
+		series, basic, stress, inch = asme, asme, asme, ".inch"
+	}
+	w.input("d", "thread diameter", t.Diameter, "mm", series)
+	w.input("P", "pitch", t.Pitch, "mm", series)
+	n.pitchDiameter = w.lineBy("d_2"+inch, "d_2", "pitch diameter", t.PitchDiameter(), "mm", basic)
+	n.minorDiameter = w.lineBy("d_3"+inch, "d_3", "minor diameter", t.MinorDiameter(), "mm", "ISO 68-1")
+	n.stressArea = w.lineBy("A_S"+inch, "A_S", "stress area of the thread", t.StressArea(), "mm2", stress)
 	n.nominalArea = w.line("A_N", "nominal cross-section", t.NominalArea(), "mm2", arithmetic)
 	n.minorArea = w.line("A_d3", "cross-section of the minor diameter", t.MinorArea(), "mm2", arithmetic)
 	w.describePieces()
@@ -64,11 +68,17 @@ func (w *work) describePieces() {
 	n := &w.thread
 	n.stressDiameter = w.joint.Bolt.Thread.StressDiameter()
 	rule := "d_0"
-	for i, s := range w.joint.Bolt.pieces() {
+	if w.joint.Bolt.Thread.Inch {
+		rule += ".inch"
+	}
+	pieces := w.joint.Bolt.pieces()
+	if len(pieces) > 0 {
+		rule += ".shank"
+	}
+	for i, s := range pieces {
 		w.inputAt(i+1, "l_S", "length of the shank in the grip", s.Length, "mm", stated)
 		w.inputAt(i+1, "d_S", "diameter of the shank", s.Diameter, "mm", stated)
 		n.stressDiameter = math.Min(n.stressDiameter, s.Diameter)
-		rule = "d_0.shank"
 	}
 	w.lineBy(rule, "d_0", "diameter of the weakest section", n.stressDiameter, "mm", guideline+"R7")
 }
@@ -88,12 +98,12 @@ func (b Bolt) pieces() []Segment {
 // force at their ends.
 func (w *work) describeFriction() {
 	w.faces = w.joint.bearingFaces()
-	f, n, turned := w.joint.Friction, w.thread, w.faces[0]
+	f, n, turned := w.joint.Friction, w.thread, w.joint.turnedFace(w.faces)
 	w.input("mu_G_min", "least friction in the thread", f.Thread.Low, "-", f.Source)
 	w.input("mu_G_max", "most friction in the thread", f.Thread.High, "-", f.Source)
 	w.input("mu_K_min", "least friction under the head", f.Head.Low, "-", f.Source)
 	w.input("mu_K_max", "most friction under the head", f.Head.High, "-", f.Source)
-	w.input("D_Ka", "outer diameter of the face that turns", turned.outer, "mm", w.joint.Bolt.Head.Source)
+	w.input("D_Ka", "outer diameter of the face that turns", turned.outer, "mm", turned.source)
 	w.input("D_Ki", "inner diameter of the face that turns", turned.inner, "mm", stated)
 	w.line("D_Km", "effective diameter of the friction under the head", (turned.outer+turned.inner)/2, "mm", guideline+"R13")
 	w.line("lead", "lead angle of the thread, tangent", math.Tan(friction.LeadAngle(n.pitch, n.pitchDiameter)), "-",

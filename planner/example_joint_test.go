@@ -104,7 +104,7 @@ func drawJoint(t *rapid.T) planner.Joint {
 // drawService draws temperatures, losses and safety factors.
 func drawService(t *rapid.T, j *planner.Joint) {
 	temperature := func(name string) float64 { return rapid.Float64Range(-200, 300).Draw(t, name) }
-	j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(temperature("service"))}
+	j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Single(temperature("service"))}
 	if rapid.Bool().Draw(t, "states") {
 		j.Temperature.States = []planner.ThermalState{
 			{Name: "start-up", Bolt: temperature("bolt 1"), Parts: temperature("parts 1")},

@@ -10,6 +10,7 @@ import (
 type CyclicThread struct {
 	Diameter    float64               // d, mm
 	Yield       float64               // R_p0.2, MPa
+	Yielding    float64               // mean stress at which the bolt yields, F_0.2min/A_S, MPa; 0: Yield
 	RolledAfter bool                  // rolled after heat treatment; false: before
 	Cycles      float64               // load cycles; 0: as many as the endurance limit holds for
 	Operating   stiffness.StressPoint // MPa
@@ -18,21 +19,19 @@ type CyclicThread struct {
 
 // FatigueDiagram returns the diagram of a plan's thread at the highest preload, where
 // the mean stress is largest and a thread rolled after heat treatment endures least;
-// false where no fatigue is checked. The amplitude is that of the plan's check.
-func FatigueDiagram(p Plan, rolledAfter bool) (stiffness.FatigueDiagram, bool) {
-	for _, c := range p.Checks {
-		if c.Name != "fatigue" {
-			continue
-		}
-		bolt, loads := p.Joint.Bolt, p.Joint.Loads
-		mean := p.Preload.Highest + p.Stiffness.LoadFactor*loads.Axial.Middle() // F_Sm
-		return CyclicThread{
-			Diameter: bolt.Thread.Diameter, Yield: bolt.Class.YieldStrength, RolledAfter: rolledAfter, Cycles: loads.Cycles,
-			Operating: stiffness.StressPoint{Mean: mean / bolt.Thread.StressArea(), Amplitude: c.Value},
-			Demanded:  p.Joint.Safety.Fatigue,
-		}.Diagram(), true
+// false where no fatigue is checked. The operating point is that of the plan's check.
+func FatigueDiagram(p Plan) (stiffness.FatigueDiagram, bool) {
+	f := p.Fatigue
+	if f == nil {
+		return stiffness.FatigueDiagram{}, false
 	}
-	return stiffness.FatigueDiagram{}, false
+	d := CyclicThread{
+		Diameter: p.Joint.Bolt.Thread.Diameter, Yield: f.Yield, Yielding: f.Yielding, RolledAfter: p.Joint.Bolt.RolledAfter,
+		Cycles: f.Cycles, Operating: stiffness.StressPoint{Mean: f.Mean, Amplitude: f.Amplitude},
+		Demanded: p.Joint.Safety.Fatigue,
+	}.Diagram()
+	d.Spectrum = f.Cycles == 0
+	return d, true
 }
 
 // Diagram returns the limits of the thread with its operating point and margin.
@@ -53,7 +52,7 @@ func (t CyclicThread) Diagram() stiffness.FatigueDiagram {
 	return d
 }
 
-// leastMeanShare is the mean stress over R_p0.2 from which the guideline gives the
+// leastMeanShare is the mean force over F_0.2min from which the guideline gives the
 // limit of threads rolled after heat treatment; below it the limit is held.
 const leastMeanShare = 0.3
 
@@ -67,10 +66,19 @@ func (t CyclicThread) limits(cycles float64) []stiffness.StressPoint {
 		limit := EnduranceLimit(t.Diameter) * math.Cbrt(life)
 		return []stiffness.StressPoint{{Mean: 0, Amplitude: limit}, {Mean: t.Yield, Amplitude: limit}}
 	}
-	limit := EnduranceLimit(t.Diameter) * math.Pow(life, 1.0/6)
-	held := (2 - leastMeanShare) * limit
-	return []stiffness.StressPoint{{Mean: 0, Amplitude: held}, {Mean: leastMeanShare * t.Yield, Amplitude: held},
-		{Mean: t.Yield, Amplitude: limit}}
+	yielding := t.Yielding
+	if yielding == 0 {
+		yielding = t.Yield
+	}
+	var corners []stiffness.StressPoint
+	for _, mean := range []float64{0, leastMeanShare * yielding, math.Min(yielding, t.Yield), t.Yield} {
+		if i := len(corners); i > 0 && mean <= corners[i-1].Mean {
+			continue
+		}
+		corners = append(corners, stiffness.StressPoint{Mean: mean,
+			Amplitude: EnduranceLimitRolledAfter(t.Diameter, mean/yielding) * math.Pow(life, 1.0/6)})
+	}
+	return corners
 }
 
 // underYield cuts a curve at the yield line, sigma_m + sigma_a = R_p0.2, which it

@@ -41,6 +41,7 @@ func (v *validator) reach(j Joint) bool {
 		}
 	}
 	grip, length := j.Grip(), j.Bolt.Length
+	grip += j.nutStack()
 	if !(length > 0) || !v.require(length > grip, at("bolt.length"), "state a longer bolt, or thinner parts",
 		"the grip of %s is longer than the bolt of %s", mm(grip), mm(length)) {
 		return false

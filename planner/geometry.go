@@ -19,11 +19,31 @@ func (j Joint) Grip() float64 {
 // Engagement returns the length of thread that holds in the nut or the tapped
 // part, mm. It is negative when the bolt does not reach it.
 func (j Joint) Engagement() float64 {
-	reach := j.Bolt.Length - j.Grip()
+	reach := j.Bolt.Length - j.Grip() - j.nutStack()
 	if j.Tapped != nil {
 		return math.Min(reach, j.Tapped.Depth)
 	}
 	return math.Min(reach, j.Nut.Height)
+}
+
+// nutStack is the length of bolt that a nut at the head end of a stud and a thin
+// lock nut take up, mm.
+func (j Joint) nutStack() float64 {
+	var length float64
+	if j.HeadNut != nil {
+		length += j.HeadNut.Height
+	}
+	if j.LockNut != nil {
+		length += j.LockNut.Height
+	}
+	return length
+}
+
+func heightOf(n *fastener.Nut) float64 {
+	if n == nil {
+		return 0
+	}
+	return n.Height
 }
 
 // SmallestOuterDiameter returns D_A, the smallest outer diameter of the
@@ -64,6 +84,16 @@ type layer struct {
 	hotModulus float64 // stated, MPa; 0: from the tables
 }
 
+// turnedFace returns the bearing face of what is turned: the head, the nut of a stud,
+// or the upper of two nuts, which bears on the lower one around the thread.
+func (j Joint) turnedFace(faces []face) face {
+	if j.LockNut == nil {
+		return faces[0]
+	}
+	return face{name: "upper nut", outer: math.Min(j.Nut.BearingDiameter, j.LockNut.BearingDiameter), inner: j.Bolt.Thread.Diameter,
+		source: j.Nut.Source}
+}
+
 // layers returns what is clamped, from the head down.
 func (j Joint) layers() []layer {
 	all := make([]layer, 0, len(j.Parts)+2)
@@ -102,7 +132,11 @@ func (j Joint) bearingFaces() []face {
 	first, last := j.Parts[0], j.Parts[len(j.Parts)-1]
 	faces := endFaces("head", j.Bolt.Head.BearingDiameter, j.HeadWasher, first)
 	if j.Nut != nil {
-		faces = append(faces, endFaces("nut", j.Nut.BearingDiameter, j.NutWasher, last)...)
+		bearing := j.Nut.BearingDiameter
+		if j.LockNut != nil {
+			bearing = j.LockNut.BearingDiameter
+		}
+		faces = append(faces, endFaces("nut", bearing, j.NutWasher, last)...)
 	}
 	return faces
 }

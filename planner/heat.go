@@ -14,7 +14,8 @@ func (w *work) heat() {
 		w.inputAt(i+1, "alpha_P", "expansion of "+l.name, l.expansion, "1/K", l.source)
 	}
 	t := w.joint.Temperature
-	w.input("temp_M", "temperature at assembly", t.Assembly, "degC", stated)
+	w.input("temp_M", "lowest temperature at assembly", t.Assembly.Low, "degC", stated)
+	w.input("temp_N", "highest temperature at assembly", t.Assembly.High, "degC", stated)
 	if len(t.States) > 0 || t.softens() {
 		w.heatByState()
 	} else {
@@ -35,7 +36,7 @@ func (w *work) heatAlike() {
 	w.input("temp_hi", "highest temperature in service, moduli as at room temperature", t.Service.High, "degC", stated)
 	perDegree := w.line("dF_K", "preload lost per degree of warming",
 		excess/(w.boltCompliance+w.clampedCompliance), "N/K", guideline+"R4")
-	low, high := perDegree*(t.Service.Low-t.Assembly), perDegree*(t.Service.High-t.Assembly)
+	low, high := perDegree*(t.Service.Low-t.Assembly.High), perDegree*(t.Service.High-t.Assembly.Low)
 	w.thermalLoss = w.line("dF_Vth", "preload lost by temperature", math.Max(0, math.Max(low, high)), "N", guideline+"R4")
 	w.thermalGain = w.line("dF_gain", "preload gained by temperature", math.Max(0, math.Max(-low, -high)), "N",
 		guideline+"R4")
@@ -44,7 +45,8 @@ func (w *work) heatAlike() {
 // hotState is what one state of service does to the clamp.
 type hotState struct {
 	name string
-	loss float64 // N, of preload by expansion; negative: a gain
+	loss float64 // N, of preload by expansion, the most; negative: a gain
+	gain float64 // N, the most
 	rest float64 // q_E, share of the preload that the fall of the moduli leaves
 }
 
@@ -73,16 +75,18 @@ func (w *work) heatByState() {
 			hot += w.layerCompliances[i] * softness
 		}
 		w.lineAt(k+1, "delta_T", "compliance of bolt and parts"+at, hot, "mm/N", guideline+"R4")
+		from := func(assembly float64) float64 { return (bolt*(s.Bolt-assembly) - parts*(s.Parts-assembly)) / hot }
 		w.hot = append(w.hot, hotState{
 			s.Name,
-			w.lineAt(k+1, "dF_T", "preload lost by expansion"+at, (bolt*(s.Bolt-t.Assembly)-parts*(s.Parts-t.Assembly))/hot,
-				"N", guideline+"R4"),
+			w.lineAt(k+1, "dF_T", "most preload lost by expansion"+at, math.Max(from(t.Assembly.Low), from(t.Assembly.High)), "N", guideline+"R4"),
+			-w.lineAt(k+1, "dF_U", "least preload lost by expansion, negative is a gain"+at,
+				math.Min(from(t.Assembly.Low), from(t.Assembly.High)), "N", guideline+"R4"),
 			w.lineAt(k+1, "q_E", "share of the preload that the fall of the moduli leaves"+at, cold/hot, "-", guideline+"R4"),
 		})
 	}
 	for _, s := range w.hot {
 		w.thermalLoss = math.Max(w.thermalLoss, s.loss)
-		w.thermalGain = math.Max(w.thermalGain, -s.loss)
+		w.thermalGain = math.Max(w.thermalGain, s.gain)
 	}
 	w.lineBy("dF_Vth.state", "dF_Vth", "preload lost by temperature", w.thermalLoss, "N", guideline+"R4")
 	w.lineBy("dF_gain.state", "dF_gain", "preload gained by temperature", w.thermalGain, "N", guideline+"R4")

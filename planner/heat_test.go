@@ -21,7 +21,7 @@ func TestStatesOfHeatByHand(t *testing.T) {
 	for _, part := range j.Parts {
 		require.Equal(t, 205e3, part.Material.Modulus)
 	}
-	j.Temperature = &planner.Temperature{Assembly: 20, States: []planner.ThermalState{
+	j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), States: []planner.ThermalState{
 		{Name: "start-up", Bolt: 20, Parts: 160}, {Name: "running", Bolt: 180, Parts: 160},
 	}}
 	p := work(t, j)
@@ -52,7 +52,7 @@ func TestYieldInTheHeat(t *testing.T) {
 	for service, yield := range map[float64]float64{20: 940, 100: 875, 200: 790, 250: 745, 300: 705} {
 		j := flange(t)
 		j.Parts[0].Material = material(t, "S355")
-		j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(service)}
+		j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Single(service)}
 		j.Safety.Yield = 1.25
 		for _, c := range work(t, j).Checks {
 			if c.Name == "working stress" {
@@ -75,7 +75,7 @@ func TestBeyondTheDataOfHeat(t *testing.T) {
 		assert.Equal(t, messages, got)
 	}
 	at := func(c float64) *planner.Temperature {
-		return &planner.Temperature{Assembly: 20, Service: quantity.Range{Low: 20, High: c}}
+		return &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Range{Low: 20, High: c}}
 	}
 	refused(func(j *planner.Joint) { j.Temperature = at(310) },
 		"310 degC lies beyond the data for the yield strength of class 10.9")

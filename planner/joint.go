@@ -22,8 +22,13 @@ type Joint struct {
 
 	Pattern pattern.Pattern // where the bolts sit; zero: not stated
 	Bolt    Bolt
+	HeadNut *fastener.Nut // of a stud: the nut that is turned, in place of a head; nil: a headed bolt
 	Nut     *fastener.Nut // nil when the bolt goes into a tapped part
+	LockNut *fastener.Nut // thin nut between the part and Nut, which is then turned; nil: none
 	Tapped  *Tapped       // nil when there is a nut
+
+	NutClass string  // property class of Nut; empty: not stated
+	NutShear float64 // shear strength of Nut, MPa; 0: not stated, stripping is then not computed
 
 	HeadWasher *fastener.Washer // nil: none
 	NutWasher  *fastener.Washer // nil: none
@@ -42,6 +47,11 @@ type Joint struct {
 	// Group is what each bolt gets in each load case on the whole joint, by case and
 	// bolt; it stands in place of Loads.Axial. Nil: not stated.
 	Group []group.Share
+	// GroupLoads are the load cases that Group was shared out from. Nil: Group came from
+	// a finite-element run.
+	GroupLoads []group.Load
+
+	Eccentric *Eccentric // nil: clamped and loaded concentrically
 }
 
 // Bolt is the bolt of a joint.
@@ -52,6 +62,8 @@ type Bolt struct {
 	Length   float64   // l, mm, from under the head to the end
 	Shank    *float64  // full-diameter length inside the grip, mm; nil: not stated
 	Segments []Segment // pieces of shank inside the grip, from the head down; instead of Shank
+
+	RolledAfter bool // thread rolled after heat treatment; false: before, or not known
 
 	HotModulus float64 // E_S at its highest temperature in service, MPa; 0: from the tables
 	HotYield   float64 // R_p0.2 at its highest temperature in service, MPa; 0: from the tables
@@ -77,6 +89,16 @@ type Part struct {
 type Tapped struct {
 	Material fastener.Material
 	Depth    float64 // usable thread depth, mm
+
+	OuterDiameter float64 // of a boss around the thread, mm; 0: not stated, wide enough not to dilate
+	Insert        *Insert // nil: the thread is cut in the part itself
+}
+
+// Insert is a threaded insert with its own strength.
+type Insert struct {
+	Length  float64 // mm
+	PullOut float64 // force that pulls it out of the part, N
+	Source  string
 }
 
 // Clamp is what the joint must still hold in service, per bolt.
@@ -97,6 +119,8 @@ type Clamp struct {
 type Loads struct {
 	Axial              quantity.Range // F_A, N; negative is compression
 	IntroductionFactor *float64       // n; nil: not stated
+	Introduction       *Introduction  // where the load enters, in place of n; nil: not stated
+	Spectrum           []Block        // in place of Cycles; Axial then spans its blocks
 	Cycles             float64        // load cycles between the ends of Axial; 0: static
 }
 
@@ -131,7 +155,7 @@ type Closing struct {
 // Temperature is the temperature of the joint: one Service range that bolt and
 // parts share, or States in which they differ.
 type Temperature struct {
-	Assembly float64        // degC
+	Assembly quantity.Range // degC, of bolt and parts while they are tightened
 	Service  quantity.Range // degC; without States
 	States   []ThermalState
 }

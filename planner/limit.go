@@ -19,17 +19,14 @@ func (w *work) limit() {
 	bounds := []bound{w.assemblyBound(), w.workingBound(extra)}
 	bounds = append(bounds, w.bearingBounds(extra)...)
 	rule := "F_lim"
-	if w.joint.Tapped != nil {
+	w.engagement()
+	if w.strips() {
 		w.stripping()
 		w.safety("S_M", "least safety factor of the thread against stripping", w.stated.Stripping)
-		force := w.line("F_thr", "preload that the tapped thread tolerates",
+		force := w.line("F_thr", "preload that the thread tolerates",
 			math.Max(0, w.strip/w.joint.Safety.Stripping-extra), "N", guideline+"R11")
 		bounds = append(bounds, bound{"thread stripping", force})
 		rule = "F_lim.tapped"
-	} else {
-		w.input("l_b", "length of the bolt under the head", w.joint.Bolt.Length, "mm", stated)
-		w.input("m_N", "height of the nut", w.joint.Nut.Height, "mm", w.joint.Nut.Source)
-		w.lineBy("l_eng.nut", "l_eng", "length of engaged thread", w.joint.Engagement(), "mm", arithmetic)
 	}
 	least := bounds[0]
 	for _, b := range bounds[1:] {

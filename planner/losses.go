@@ -45,9 +45,14 @@ func (w *work) guideEmbedding() float64 {
 	w.input("fz_G", "embedding in the thread", guide.thread, "um", source)
 	w.input("fz_B", "embedding at a bearing face of head or nut", guide.bearingFace, "um", source)
 	w.input("fz_I", "embedding at an inner interface", guide.innerInterface, "um", source)
+	threads := 1.0
+	if w.joint.HeadNut != nil {
+		threads = 2
+		w.input("n_G_thr", "number of engaged threads", threads, "-", "counted")
+	}
 	w.input("n_B", "number of bearing faces", float64(faces), "-", "counted")
 	w.input("n_I", "number of inner interfaces", float64(inner), "-", "counted")
-	total := guide.thread + float64(faces)*guide.bearingFace + float64(inner)*guide.innerInterface
+	total := threads*guide.thread + float64(faces)*guide.bearingFace + float64(inner)*guide.innerInterface
 	return w.line("fz_sum", "embedding", total, "um", guideline+"Table 5")
 }
 
@@ -71,14 +76,13 @@ func (w *work) close() {
 // and the share of the load that the bolt gets. The load may be absent, so a
 // load that is always compressive relieves nothing.
 func (w *work) requirement() {
-	axial := w.joint.Loads.Axial
-	w.input("F_A_min", "lowest axial load, negative is compression", axial.Low, "N", stated)
-	w.input("F_A_max", "highest axial load", axial.High, "N", stated)
-	tension := math.Max(axial.High, 0)
 	w.relief = w.line("F_PA", "share of the load that relieves the clamp",
-		(1-w.loadFactor)*tension, "N", guideline+"R3")
-	w.boltShare = w.line("F_SA", "share of the load that the bolt carries",
-		w.loadFactor*tension, "N", guideline+"R3")
+		(1-w.loadFactor)*math.Max(w.axial.clamp, 0), "N", guideline+"R3")
+	share := math.Max(0, w.loadFactor*math.Max(w.axial.high, 0))
+	if e := w.joint.Eccentric; e != nil {
+		share += math.Max(0, w.momentFactor*e.MomentHigh)
+	}
+	w.boltShare = w.line("F_SA", "share of the load that the bolt carries", share, "N", guideline+"R3")
 	w.soften()
 	w.relax()
 	w.required = w.line("F_Mreq", "required assembly preload", w.beforeRelaxation()+w.relaxation, "N", guideline+"R5")

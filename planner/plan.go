@@ -26,11 +26,13 @@ type Plan struct {
 	Checks        []Check       `json:"checks"`
 	Trace         []Line        `json:"trace"`
 	Assumptions   []string      `json:"assumptions"`
+	Governing     []Governing   `json:"governing,omitempty"` // of a joint planned from its load cases: who decides what
 
 	CheckedAt   Setting           `json:"-"` // the setting that preloads and checks were worked out at
 	SnugTooHigh bool              `json:"-"` // the stated snug torque leaves nothing to tighten up to
 	Joint       Joint             `json:"-"` // what was planned, completed by the assumptions
 	Diagram     stiffness.Diagram `json:"-"` // points of the joint diagram
+	Fatigue     *Fatigue          `json:"-"` // nil: not cyclic
 	AngleWindow quantity.Range    `json:"-"` // where the angle setting may lie, deg; torque and angle only
 }
 

@@ -17,8 +17,9 @@ func Work(joint Joint) (Plan, error) {
 	w := newWork(joint)
 	w.assume()
 	w.describe()    // the bolt, the loads and the tightening as numbers
-	w.demand()      // F_Kerf
 	w.springs()     // delta_S, delta_P, Phi
+	w.operate()     // F_A, F_Q, of a group those of the bolts that govern
+	w.demand()      // F_Kerf
 	w.losses()      // F_Z, dF_Vth
 	w.requirement() // F_Mreq
 	w.limit()       // F_lim
@@ -51,7 +52,18 @@ type work struct {
 	boltCompliance    float64 // delta_S
 	clampedCompliance float64 // delta_P
 	layerCompliances  []float64
+	freeThread        float64 // l_Gew, mm
 	loadFactor        float64 // Phi
+
+	tilt              float64 // beta_P, of the parts in bending, 1/(N mm)
+	eccentricClamping float64 // delta_P*
+	eccentricLoading  float64 // delta_P**
+	momentFactor      float64 // bolt force over working moment, 1/mm
+	boltTilt          float64 // beta_S, of the bolt in bending, 1/(N mm)
+
+	axial   axialLoads
+	governs []Governing
+	fatigue *Fatigue
 
 	residualClamp float64 // F_Kerf
 	relief        float64 // (1 - Phi) F_Amax, taken from the clamp
@@ -66,6 +78,7 @@ type work struct {
 	thermalGain   float64 // dF_Vth where it is a gain
 	required      float64 // F_Mreq
 
+	shearRatioDown   bool    // r_tau stands in the trace
 	strip            float64 // F_strip of a tapped thread
 	engagementNeeded float64 // with which the bolt breaks before the thread strips
 	tolerated        float64 // F_lim
@@ -125,6 +138,8 @@ func (w *work) plan() Plan {
 		Joint:         w.joint,
 		Diagram:       w.diagram(),
 		AngleWindow:   w.angleRange(),
+		Governing:     w.governs,
+		Fatigue:       w.fatigue,
 	}
 }
 
@@ -145,7 +160,7 @@ func (w *work) given() (Torque, Angle) {
 
 // diagram gathers the points the joint diagram is drawn from.
 func (w *work) diagram() stiffness.Diagram {
-	return stiffness.Diagram{
+	d := stiffness.Diagram{
 		BoltCompliance:    w.boltCompliance,
 		ClampedCompliance: w.clampedCompliance,
 		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
@@ -153,8 +168,8 @@ func (w *work) diagram() stiffness.Diagram {
 		Closing:           w.closing,
 		Loss:              w.lowest - w.lowestClamp - w.relief,
 		Gain:              w.thermalGain,
-		Axial:             w.joint.Loads.Axial,
-		Cyclic:            w.joint.Loads.Cycles > 0,
+		Axial:             quantity.Range{Low: w.axial.low, High: w.axial.high},
+		ClampAxial:        w.axial.clamp,
 		LoadFactor:        w.loadFactor,
 		BoltShare:         w.boltShare,
 		ClampShare:        w.relief,
@@ -162,6 +177,14 @@ func (w *work) diagram() stiffness.Diagram {
 		RequiredResidual:  w.residualClamp,
 		Limit:             w.tolerated,
 	}
+	if w.joint.Loads.cyclic() {
+		d.Swinging = quantity.Range{Low: w.axial.swingLo, High: w.axial.swingHi}
+	}
+	if e := w.joint.Eccentric; e != nil {
+		d.Eccentric, d.ClampedCompliance = true, w.eccentricClamping
+		d.Moment = quantity.Range{Low: w.momentFactor * e.MomentLow, High: w.momentFactor * e.MomentHigh}
+	}
+	return d
 }
 
 // angleRange is the window of the angle setting, where the angle is set.

@@ -91,7 +91,7 @@ func TestTemperature(t *testing.T) {
 	at := func(service float64) planner.Plan {
 		j := flange(t)
 		j.Parts[0].Material.Expansion, j.Parts[1].Material.Expansion = 10e-6, 10e-6 // grey iron
-		j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(service)}
+		j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Single(service)}
 		return work(t, j)
 	}
 	hot, cold, same := at(100), at(-60), at(20)

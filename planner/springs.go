@@ -1,6 +1,9 @@
 package planner
 
-import "clampback/planner/stiffness"
+import (
+	"clampback/planner/fastener"
+	"clampback/planner/stiffness"
+)
 
 // springs works out the compliances of bolt and clamped parts and the load
 // factor.
@@ -9,8 +12,15 @@ func (w *work) springs() {
 	w.boltSpring()
 	w.clampedSpring()
 
-	n := *w.joint.Loads.IntroductionFactor
-	w.input("n", "load introduction factor", n, "-", stated)
+	w.bending(w.joint.body().Cones())
+	n := w.introduction()
+	if e := w.joint.Eccentric; e != nil {
+		w.loadFactor = w.lineBy("Phi.eccentric", "Phi", "load factor",
+			n*w.eccentricLoading/(w.boltCompliance+w.eccentricClamping), "-", guideline+"R3")
+		w.momentFactor = w.line("Phi_m", "bolt force over working moment",
+			n*e.BoltOffset*w.tilt/(w.boltCompliance+w.eccentricClamping), "1/mm", guideline+"R3")
+		return
+	}
 	w.loadFactor = w.line("Phi", "load factor",
 		stiffness.LoadFactor(n, w.boltCompliance, w.clampedCompliance), "-", guideline+"R3")
 }
@@ -30,13 +40,10 @@ func (w *work) boltSpring() {
 	modulus := j.Bolt.Class.Modulus
 	w.input("E_S", "modulus of the bolt", modulus, "MPa", j.Bolt.Class.Source)
 
-	headLength := stiffness.HexagonHeadLength
-	if j.Bolt.Head.Kind == "socket cap" {
-		headLength = stiffness.SocketHeadLength
-	}
+	headLength := headLengthOf(j.Bolt.Head)
 	w.input("c_SK", "equivalent length of the head over d", headLength, "-", guideline+"5.1.1")
 	sum := w.line("delta_SK", "compliance of the head",
-		stiffness.Rod(headLength*t.diameter, t.nominalArea, modulus), "mm/N", guideline+"5.1.1")
+		stiffness.Rod(headLength*t.diameter, t.nominalArea, modulus)+w.headThread(), "mm/N", guideline+"5.1.1")
 
 	var shank float64
 	for i, s := range j.Bolt.pieces() {
@@ -48,7 +55,12 @@ func (w *work) boltSpring() {
 	if shank > 0 {
 		rule = "l_Gew.shank"
 	}
-	free := w.lineBy(rule, "l_Gew", "free thread in the grip", j.Grip()-shank, "mm", arithmetic)
+	free := j.Grip() - shank
+	if j.LockNut != nil {
+		w.input("m_T", "height of the thin nut", j.LockNut.Height, "mm", j.LockNut.Source)
+		free += j.LockNut.Height
+	}
+	w.freeThread = w.lineBy(rule, "l_Gew", "free thread in the grip", free, "mm", arithmetic)
 	sum += w.line("delta_Gew", "compliance of the free thread",
 		stiffness.Rod(free, t.minorArea, modulus), "mm/N", guideline+"5.1.1")
 	sum += w.line("delta_G", "compliance of the engaged thread",
@@ -60,6 +72,26 @@ func (w *work) boltSpring() {
 		rule = "delta_S.shank"
 	}
 	w.boltCompliance = w.lineBy(rule, "delta_S", "compliance of the bolt", sum, "mm/N", guideline+"5.1.1")
+}
+
+// headThread is the give of the engaged thread where a nut stands in place of the head.
+func (w *work) headThread() float64 {
+	if w.joint.HeadNut == nil {
+		return 0
+	}
+	w.input("c_GK", "engaged thread at the nut in place of the head over d", stiffness.EngagedThreadLength, "-", guideline+"5.1.1")
+	return stiffness.Rod(stiffness.EngagedThreadLength*w.thread.diameter, w.thread.minorArea, w.joint.Bolt.Class.Modulus)
+}
+
+// headLengthOf returns l_SK/d of a head, l_M/d of a nut in its place.
+func headLengthOf(h fastener.Head) float64 {
+	if h.Kind == "stud" {
+		return stiffness.NutThreadLength
+	}
+	if h.Kind == "socket cap" {
+		return stiffness.SocketHeadLength
+	}
+	return stiffness.HexagonHeadLength
 }
 
 // engagementSpring is the give of the nut or of the tapped thread.

@@ -8,6 +8,7 @@ const (
 	guideline  = "VDI 2230-1:2015 "
 	iso724     = "ISO 724"
 	iso898     = "ISO 898-1"
+	asme       = "ASME B1.1"
 	arithmetic = "arithmetic"
 )
 
@@ -51,6 +52,8 @@ func (w *work) safety(symbol, meaning string, factor float64) {
 		w.input(symbol, meaning, factor, "-", stated)
 	}
 }
+
+func itoa(i int) string { return strconv.Itoa(i) }
 
 func indexed(symbol string, i int) string { return symbol + "_" + strconv.Itoa(i) }
 

@@ -34,8 +34,12 @@ func (j Joint) Faults() []Fault {
 	}
 	v.materials(j)
 	v.pattern(j)
-	v.clamp(j.Clamp)
-	v.loads(j.Loads)
+	v.clamp(j.Clamp, j.slips())
+	v.loads(j.Loads, len(j.Group) > 0)
+	v.spectrum(j.Loads)
+	v.introduction(j)
+	v.group(j)
+	v.eccentric(j)
 	v.safety(j.Safety)
 	v.losses(j.Losses)
 	before = len(v.faults)
@@ -76,7 +80,7 @@ func (v *validator) identity(j Joint) {
 func (v *validator) bolt(b Bolt) {
 	thread := b.Thread.Diameter
 	v.require(thread > 0, at("bolt.thread"), "state the thread, for example M12", "no thread is stated")
-	v.require(b.Head.BearingDiameter > 0, at("bolt.head", "bolt.thread"), "state the head, for example hexagon",
+	v.require(b.Head.BearingDiameter > 0, at("bolt.head", "bolt.thread", "nut"), "state the head, for example hexagon",
 		"no head is stated")
 	v.require(b.Class.YieldStrength > 0, at("bolt.property_class", "bolt.thread"), "state the property class, for example 8.8",
 		"no property class is stated")
@@ -100,7 +104,8 @@ func (v *validator) ends(j Joint) {
 		"add nut: hexagon, or tapped: {material: S355, depth: 24 mm}", "neither nut nor tapped is stated") {
 		return
 	}
-	v.require(j.Nut == nil || j.Tapped == nil, at("tapped", "nut"), "keep one of them", "both nut and tapped are stated")
+	v.require(j.Nut == nil || j.Tapped == nil, at("tapped", "nut", "bolt.head"), "keep one of them, or state head: stud", "both nut and tapped are stated")
+	v.nuts(j)
 	if j.Tapped == nil {
 		v.require(j.Nut.Height > 0 && j.Nut.BearingDiameter > 0, at("nut", "bolt.thread"), "state the nut, for example hexagon",
 			"the nut has no height or no bearing face")
@@ -108,6 +113,7 @@ func (v *validator) ends(j Joint) {
 	}
 	v.require(j.NutWasher == nil || j.Nut != nil, at("washers.nut", "nut"),
 		"remove it, or state washers: {nut: none} where defaults have one", "a nut washer is stated, but there is no nut")
+	v.tapped(j)
 	v.positive(j.Tapped.Depth, lengths, at("tapped.depth"), "the thread depth", "state the usable depth of the thread")
 }
 
@@ -135,8 +141,10 @@ func (v *validator) materials(j Joint) {
 	}
 	if j.Tapped != nil {
 		v.material(j.Tapped.Material, at("tapped.material."))
-		v.positive(j.Tapped.Material.ShearStrength, pressures, at("tapped.material.shear_strength"),
-			"the shear strength of the tapped part", noStrength)
+		if j.Tapped.Insert == nil {
+			v.positive(j.Tapped.Material.ShearStrength, pressures, at("tapped.material.shear_strength"),
+				"the shear strength of the tapped part", noStrength)
+		}
 	}
 }
 
@@ -156,7 +164,7 @@ func (v *validator) material(m fastener.Material, where place) {
 	v.notNegative(m.TensileStrength, pressures, property("tensile_strength"), "the tensile strength")
 }
 
-func (v *validator) clamp(c Clamp) {
+func (v *validator) clamp(c Clamp, slips bool) {
 	v.notNegative(c.Residual, forces, at("clamp.residual"), "the residual clamp force")
 	v.notNegative(c.Transverse, forces, at("clamp.transverse"), "the transverse load")
 	v.notNegative(c.Torque, torques, at("clamp.torque"), "the torque about the bolt axis")
@@ -164,14 +172,14 @@ func (v *validator) clamp(c Clamp) {
 	v.notNegative(c.SealPressure, pressures, at("clamp.seal.pressure"), "the sealed pressure")
 	v.require(c.Interfaces >= 0 && c.Interfaces <= 100, at("clamp.interfaces"),
 		"state how many faces carry the load, for example 1", "the number of slip faces is %d", c.Interfaces)
-	nothing := c.Residual == 0 && c.Transverse == 0 && c.Torque == 0 && c.SealArea*c.SealPressure == 0
+	nothing := !slips && c.Residual == 0 && c.Transverse == 0 && c.Torque == 0 && c.SealArea*c.SealPressure == 0
 	v.require(!nothing, at("clamp"), "state residual, transverse, torque or seal", "nothing says what the joint must hold")
 	v.require(c.TorqueRadius != 0 || c.Torque <= 0, at("clamp.torque_radius", "clamp.torque"), "add torque_radius: 40 mm",
 		"the torque about the bolt axis has no friction radius")
 	v.positiveOrNone(c.TorqueRadius, lengths, at("clamp.torque_radius"), "the friction radius of the torque",
 		"state it as a length, for example 40 mm")
 	if c.InterfaceFriction == 0 {
-		v.require(!c.slips(), at("clamp.interface_friction", "clamp.transverse", "clamp.torque"), "add interface_friction: 0.12",
+		v.require(!slips, at("clamp.interface_friction", "clamp.transverse", "clamp.torque", "group"), "add interface_friction: 0.12",
 			"friction must carry a load, but the interface friction is not stated")
 		return
 	}
@@ -179,12 +187,12 @@ func (v *validator) clamp(c Clamp) {
 		"state the least one as a plain number, for example 0.12")
 }
 
-func (v *validator) loads(l Loads) {
+func (v *validator) loads(l Loads, grouped bool) {
 	inside := l.Axial.Low >= -forces.most && l.Axial.High <= forces.most
 	v.require(inside && l.Axial.Low <= l.Axial.High, at("loads.axial"), "write it as 0 to 9.5 kN",
 		"the axial load of %s to %s is impossible", measured{l.Axial.Low, quantity.Force}, measured{l.Axial.High, quantity.Force})
 	if l.IntroductionFactor == nil {
-		v.require(l.Axial == quantity.Range{}, at("loads.introduction_factor", "loads.axial"),
+		v.require(l.Introduction != nil || (!grouped && l.Axial == quantity.Range{}), at("loads.introduction_factor", "loads.axial", "loads.introduction", "loads.spectrum", "group"),
 			"state introduction_factor: 1 where the load enters at head and nut, 0.5 where it enters half way to the interface, less nearer to it",
 			"the axial load has no load introduction factor")
 	} else {
@@ -208,8 +216,8 @@ func (v *validator) temperature(t *Temperature) {
 		v.require(possible(s.Parts), itemOf("temperature.states", i, "parts"), "state -273.15 to 1000 degC",
 			"%g degC is impossible", s.Parts)
 	}
-	v.require(possible(t.Assembly), at("temperature.assembly"), "state -273.15 to 1000 degC",
-		"%g degC is impossible", t.Assembly)
+	v.require(possible(t.Assembly.Low) && possible(t.Assembly.High) && t.Assembly.Low <= t.Assembly.High, at("temperature.assembly"),
+		"state -273.15 to 1000 degC, low end first", "%g to %g degC is impossible", t.Assembly.Low, t.Assembly.High)
 	v.require(possible(t.Service.Low) && possible(t.Service.High) && t.Service.Low <= t.Service.High,
 		at("temperature.service"), "state -273.15 to 1000 degC, low end first",
 		"%g to %g degC is impossible", t.Service.Low, t.Service.High)

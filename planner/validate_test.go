@@ -152,10 +152,10 @@ func TestImpossibleService(t *testing.T) {
 		{"load that is no number", func(j *planner.Joint) { j.Loads.Axial.High = math.NaN() }, "loads.axial", "NaN"},
 		{"half a cycle", func(j *planner.Joint) { j.Loads.Cycles = 0.5 }, "loads.cycles", "0.5 load cycles"},
 		{"below absolute zero", func(j *planner.Joint) {
-			j.Temperature = &planner.Temperature{Assembly: -274, Service: quantity.Single(20)}
+			j.Temperature = &planner.Temperature{Assembly: quantity.Single(-274), Service: quantity.Single(20)}
 		}, "temperature.assembly", "-274 degC is impossible"},
 		{"molten", func(j *planner.Joint) {
-			j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Range{Low: 20, High: 1500}}
+			j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Range{Low: 20, High: 1500}}
 		}, "temperature.service", "20 to 1500 degC is impossible"},
 		{"friction of 5", func(j *planner.Joint) { j.Friction.Thread = quantity.Single(5) }, "friction.thread",
 			"the friction in the thread is 5;"},

@@ -42,7 +42,7 @@ func TestThermalLoadOfAnAgencyHandbook(t *testing.T) {
 			for i := range j.Parts {
 				j.Parts[i].Material.Expansion = c.alphaJ
 			}
-			j.Temperature = &planner.Temperature{Assembly: 20, Service: quantity.Single(20 + c.warming)}
+			j.Temperature = &planner.Temperature{Assembly: quantity.Single(20), Service: quantity.Single(20 + c.warming)}
 			p := work(t, j)
 			gain := line(t, p, "dF_gain") - line(t, p, "dF_Vth")
 			assert.InEpsilon(t, thermal, gain, 1e-9)

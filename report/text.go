@@ -55,6 +55,7 @@ func (t *text) joint(p planner.Plan) {
 	t.printf("\n%s  %s\n", p.ID, p.Name)
 	t.printf("  %s\n", Fasteners(p.Joint))
 	t.verdict(p)
+	t.governing(p)
 	t.workBack(p)
 	t.setting(p)
 	t.checks(p)
@@ -74,6 +75,12 @@ func Fasteners(j planner.Joint) string {
 	if j.NutWasher != nil {
 		parts = append(parts, "washer "+j.NutWasher.Standard+" under the nut")
 	}
+	if j.HeadNut != nil {
+		parts = append(parts, j.HeadNut.Kind+" nut "+j.HeadNut.Standard+" to turn")
+	}
+	if j.LockNut != nil {
+		parts = append(parts, j.LockNut.Kind+" nut "+j.LockNut.Standard+" below")
+	}
 	if j.Nut != nil {
 		parts = append(parts, j.Nut.Kind+" nut "+j.Nut.Standard)
 	} else {
@@ -85,7 +92,11 @@ func Fasteners(j planner.Joint) string {
 // Bolt describes one bolt: thread, length, head, class.
 func Bolt(j planner.Joint) string {
 	b := j.Bolt
-	text := fmt.Sprintf("%s x %g %s %s, class %s", b.Thread.Designation, b.Length, b.Head.Kind, b.Head.Standard, b.Class.Name)
+	head := b.Head.Kind
+	if j.HeadNut == nil {
+		head += " " + b.Head.Standard
+	}
+	text := fmt.Sprintf("%s x %s %s, class %s", b.Thread.Designation, quantity.Trim(b.Length), head, b.Class.Name)
 	if waist := b.Waist(); waist > 0 {
 		text += fmt.Sprintf(", reduced shank %g mm", waist)
 	}
@@ -103,6 +114,18 @@ func (t *text) verdict(p planner.Plan) {
 			quantity.Trim(p.Angle.SnugTorque), quantity.Trim(p.Angle.FromSnug))
 	}
 	t.printf("  %s\n", t.mark(setting, green))
+}
+
+// governing says which bolt and load case decide what, where the loads are those of
+// the whole joint.
+func (t *text) governing(p planner.Plan) {
+	if len(p.Governing) == 0 {
+		return
+	}
+	t.printf("\n  What governs\n")
+	for _, g := range p.Governing {
+		t.printf("    - %s: bolt %d in load case %s\n", g.For, g.Bolt, g.Case)
+	}
 }
 
 func (t *text) workBack(p planner.Plan) {

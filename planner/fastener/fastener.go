@@ -82,9 +82,26 @@ type Material struct {
 	Source           string
 }
 
-// NutClass returns the least nut class that belongs to the bolt's: its figure
-// before the dot, ISO 898-2.
+// NutClass returns the least nut class that belongs to the bolt's: its figure before
+// the dot, ISO 898-2; the same class of stainless steel, ISO 3506-2; the same grade,
+// SAE J995; what ASTM A193 and A320 recommend. From memory but for ISO 898-2.
 func (c PropertyClass) NutClass() string {
+	switch {
+	case strings.HasPrefix(c.Name, "A2-"), strings.HasPrefix(c.Name, "A4-"), strings.HasPrefix(c.Name, "SAE"):
+		return c.Name
+	case strings.Contains(c.Name, "B8M"):
+		return "ASTM A194 8M"
+	case strings.Contains(c.Name, "B8"):
+		return "ASTM A194 8"
+	case strings.Contains(c.Name, "B7M"), strings.Contains(c.Name, "L7M"):
+		return "ASTM A194 2HM"
+	case strings.HasPrefix(c.Name, "A193"):
+		return "ASTM A194 2H"
+	case strings.HasPrefix(c.Name, "A320"):
+		return "ASTM A194 7"
+	case c.Name == "A574":
+		return "SAE grade 8"
+	}
 	class, _, _ := strings.Cut(c.Name, ".")
 	return class
 }

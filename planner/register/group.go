@@ -49,6 +49,7 @@ func shareLoads(joint *object, j *planner.Joint, f field) []group.Share {
 	shares, err := group.Distribute(points, loads)
 	var e *group.FaultsError
 	if !errors.As(err, &e) {
+		j.GroupLoads = loads
 		return shares
 	}
 	noteFaults(joint, e.Faults)

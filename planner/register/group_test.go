@@ -23,8 +23,14 @@ const sharedLoads = `loads: {introduction_factor: 0.5, cycles: 1e6}
         - {case: standstill, force: [0 kN, 0 kN, -4 kN]}
 `
 
+// withFriction states the interface friction that transverse loads of a group need.
+func withFriction(text string) string {
+	return strings.Replace(text, "clamp: {", "clamp: {interface_friction: 0.2, ", 1)
+}
+
 // readWith reads a register that may open the given files.
 func readWith(text string, files map[string]string) ([]group.Share, []string) {
+	text = withFriction(text)
 	joints, err := register.Read(register.Source{Name: "plant/pump.yaml", Data: []byte(text), Open: func(name string) ([]byte, error) {
 		data, found := files[name]
 		if !found {
@@ -71,7 +77,7 @@ start,4,1,0,0
 `
 
 func TestGroupOfForces(t *testing.T) {
-	text := spoil(t, axialLoads, "group: {forces: fe/run 7.csv}")
+	text := spoil(t, axialLoads, "loads: {introduction_factor: 0.5}\n    group: {forces: fe/run 7.csv}")
 	shares, problems := readWith(text, map[string]string{"fe/run 7.csv": tableOfFour})
 	require.Empty(t, problems)
 	require.Len(t, shares, 4)
@@ -86,7 +92,7 @@ func TestGroupOfForces(t *testing.T) {
 func TestGroupAndDefaults(t *testing.T) {
 	grouped := strings.Replace(spoil(t, axialLoads, "group: {forces: run.csv}"), "defaults:\n",
 		"defaults:\n  loads: {axial: 3 kN, introduction_factor: 0.7}\n", 1)
-	joints, err := register.Read(register.Source{Name: "pump.yaml", Data: []byte(grouped), Open: func(string) ([]byte, error) {
+	joints, err := register.Read(register.Source{Name: "pump.yaml", Data: []byte(withFriction(grouped)), Open: func(string) ([]byte, error) {
 		return []byte(tableOfFour), nil
 	}})
 	require.NoError(t, err)

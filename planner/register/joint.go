@@ -1,7 +1,8 @@
 package register
 
 import (
-	"strings"
+	"errors"
+	"slices"
 
 	"clampback/planner"
 	"clampback/planner/fastener"
@@ -11,7 +12,7 @@ import (
 // jointKeys are the keys of a joint, and so of defaults.
 var jointKeys = []string{
 	"id", "name", "count", "pattern", "bolt", "nut", "tapped", "washers", "clamped", "clamp", "loads", "group",
-	"losses", "temperature", "friction", "tightening", "surfaces", "safety",
+	"eccentric", "losses", "temperature", "friction", "tightening", "surfaces", "safety",
 }
 
 // joint reads one joint, already merged with the defaults.
@@ -49,6 +50,9 @@ func (d *decoder) joint(n *node) planner.Joint {
 	if o.stated("surfaces") {
 		j.Roughness = readSurfaces(o.at("surfaces"))
 	}
+	if o.stated("eccentric") {
+		j.Eccentric = readEccentric(o.at("eccentric"))
+	}
 	if o.stated("safety") {
 		j.Safety = readSafety(o.at("safety"))
 	}
@@ -62,22 +66,10 @@ func (d *decoder) joint(n *node) planner.Joint {
 	return j
 }
 
-// isInchThread reports whether a designation is one of a unified thread: "1/2-13
-// UNC", "#8-32", "3/4-16".
-func isInchThread(designation string) bool {
-	size, rest, found := strings.Cut(designation, "-")
-	return strings.Contains(designation, "UN") ||
-		(found && rest != "" && strings.Trim(size, "#0123456789/ ") == "" && size != "")
-}
-
 func readBolt(f field) planner.Bolt {
-	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "hot_modulus", "hot_yield")
+	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "rolled", "hot_modulus", "hot_yield")
 	var b planner.Bolt
-	switch {
-	case !o.require("thread", "M12"):
-	case isInchThread(o.word("thread")):
-		o.at("thread").wrong("inch threads are not planned by this version", "state an ISO metric thread, for example M12")
-	default:
+	if o.require("thread", "M12") {
 		b.Thread = lookUp(o.at("thread"), fastener.ParseThread)
 	}
 	if o.require("length", "60 mm") {
@@ -87,6 +79,9 @@ func readBolt(f field) planner.Bolt {
 	if o.stated("shank") {
 		shank := o.at("shank").quantity(quantity.Length)
 		b.Shank = &shank
+	}
+	if o.stated("rolled") {
+		b.RolledAfter = o.at("rolled").choice("before heat treatment", "after heat treatment") == "after heat treatment"
 	}
 	b.HotModulus, b.HotYield = o.some("hot_modulus", quantity.Pressure), o.some("hot_yield", quantity.Pressure)
 	if !o.stated("segments") {
@@ -108,15 +103,21 @@ func readBolt(f field) planner.Bolt {
 func readHead(o *object, b *planner.Bolt) {
 	hasHead, hasClass := o.require("head", "hexagon"), o.require("property_class", `"10.9"`)
 	if hasHead && o.word("head") == "stud" {
-		o.at("head").wrong("studs are not planned by this version",
-			"state a bolt with head: hexagon, hexagon flange or socket cap")
+		b.Head.Kind = "stud" // the rest comes from its nut
 		hasHead = false
 	}
 	if b.Thread.Diameter == 0 {
 		return
 	}
 	if hasHead {
-		b.Head = lookUp(o.at("head"), func(kind string) (fastener.Head, error) { return fastener.FindHead(kind, b.Thread) })
+		b.Head = lookUp(o.at("head"), func(kind string) (fastener.Head, error) {
+			head, err := fastener.FindHead(kind, b.Thread)
+			var unknown *fastener.UnknownError
+			if errors.As(err, &unknown) {
+				unknown.Known = append(slices.Clone(unknown.Known), "stud")
+			}
+			return head, err
+		})
 	}
 	if hasClass {
 		b.Class = lookUp(o.at("property_class"), func(name string) (fastener.PropertyClass, error) {
@@ -131,13 +132,10 @@ func readEnds(o *object, j *planner.Joint) {
 	t := j.Bolt.Thread
 	sized := t.Diameter > 0
 	if o.stated("nut") {
-		j.Nut = &fastener.Nut{}
-		if sized {
-			*j.Nut = lookUp(o.at("nut"), func(kind string) (fastener.Nut, error) { return fastener.FindNut(kind, t) })
-		}
+		readNut(o.at("nut"), j, sized)
 	}
 	if o.stated("tapped") {
-		tapped := o.at("tapped").object("material", "depth")
+		tapped := o.at("tapped").object("material", "depth", "outer_diameter", "insert")
 		j.Tapped = &planner.Tapped{}
 		if tapped.require("material", "S355") {
 			j.Tapped.Material = readMaterial(tapped.at("material"))
@@ -145,6 +143,13 @@ func readEnds(o *object, j *planner.Joint) {
 		if tapped.require("depth", "24 mm") {
 			j.Tapped.Depth = tapped.at("depth").quantity(quantity.Length)
 		}
+		j.Tapped.OuterDiameter = tapped.some("outer_diameter", quantity.Length)
+		if tapped.stated("insert") {
+			j.Tapped.Insert = readInsert(tapped.at("insert"))
+		}
+	}
+	if j.Bolt.Head.Kind == "stud" {
+		setStud(o, j)
 	}
 	if !o.stated("washers") {
 		return
@@ -161,6 +166,67 @@ func readEnds(o *object, j *planner.Joint) {
 		return w
 	}
 	j.HeadWasher, j.NutWasher = washer("head"), washer("nut")
+}
+
+// nutClasses are those of ISO 898-2 and ISO 3506-2, and the grades that ASTM and SAE
+// bolts go with.
+var nutClasses = []string{"5", "6", "8", "9", "10", "12", "A2-50", "A2-70", "A2-80", "A4-50", "A4-70", "A4-80", "2H",
+	"SAE grade 2", "SAE grade 5", "SAE grade 8"}
+
+// readNut reads a nut: its kind, or a mapping that says more.
+func readNut(f field, j *planner.Joint, sized bool) {
+	t := j.Bolt.Thread
+	find := func(f field) *fastener.Nut {
+		n := &fastener.Nut{}
+		if sized {
+			*n = lookUp(f, func(kind string) (fastener.Nut, error) { return fastener.FindNut(kind, t) })
+		}
+		return n
+	}
+	if f.node.kind != mapping {
+		j.Nut = find(f)
+		return
+	}
+	o := f.object("kind", "class", "shear_strength", "lock")
+	j.Nut = &fastener.Nut{}
+	if o.require("kind", "hexagon") {
+		j.Nut = find(o.at("kind"))
+	}
+	if o.stated("class") {
+		j.NutClass = o.at("class").choice(nutClasses...)
+	}
+	j.NutShear = o.some("shear_strength", quantity.Pressure)
+	if o.stated("lock") {
+		j.LockNut = find(o.at("lock"))
+	}
+}
+
+// setStud gives a stud the nut that is turned in place of a head. In a tapped part it
+// is the only nut.
+func setStud(o *object, j *planner.Joint) {
+	b := &j.Bolt
+	if j.Nut == nil {
+		if o.d.knows("nut") {
+			head := field{o.d, o.node.get("bolt").get("head"), "head", "bolt.head"}
+			head.wrong("a stud needs a nut in place of a head", "add nut: hexagon")
+		}
+		return
+	}
+	nut := *j.Nut
+	j.HeadNut = &nut
+	b.Head = fastener.Head{Kind: "stud", Standard: nut.Standard, BearingDiameter: nut.BearingDiameter, Height: nut.Height,
+		WidthAcrossFlats: nut.WidthAcrossFlats, Source: nut.Source}
+	if j.Tapped != nil {
+		j.Nut = nil
+	}
+}
+
+func readInsert(f field) *planner.Insert {
+	o := f.object("length", "pull_out", "source")
+	o.require("length", "18 mm")
+	o.require("pull_out", "40 kN")
+	o.require("source", "where the strength comes from")
+	return &planner.Insert{Length: o.one("length", quantity.Length), PullOut: o.one("pull_out", quantity.Force), Source: o.label("source")}
 }
 
 func readParts(f field) []planner.Part {

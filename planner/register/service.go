@@ -50,13 +50,21 @@ func readAllLoads(o *object, j *planner.Joint) {
 
 // readLoads reads the loads of one bolt.
 func readLoads(joint *object) planner.Loads {
-	o := joint.at("loads").object("axial", "introduction_factor", "cycles")
+	o := joint.at("loads").object("axial", "introduction_factor", "introduction", "cycles", "spectrum")
 	l := planner.Loads{Cycles: o.some("cycles", quantity.Number)}
 	switch {
 	case o.stated("axial") && joint.stated("group"):
 		o.at("axial").wrong("both axial, the load of one bolt, and group, the loads of the whole joint, are stated", "keep one of them")
-	case o.stated("axial") || needsAxial(joint) && o.require("axial", "0 to 9.5 kN"):
+	case o.stated("spectrum") && !o.stated("axial"):
+		l.Spectrum, l.Axial = readSpectrum(o.at("spectrum"))
+	case o.stated("axial") || needsAxial(joint) && o.d.knows(o.pathOf("spectrum")) && o.require("axial", "0 to 9.5 kN"):
 		l.Axial = o.at("axial").span(quantity.Force)
+	}
+	if o.stated("spectrum") && o.stated("axial") {
+		l.Spectrum, _ = readSpectrum(o.at("spectrum"))
+	}
+	if o.stated("introduction") {
+		l.Introduction = readIntroduction(o.at("introduction"))
 	}
 	if o.stated("introduction_factor") {
 		factor := o.at("introduction_factor").quantity(quantity.Ratio)
@@ -65,11 +73,67 @@ func readLoads(joint *object) planner.Loads {
 	return l
 }
 
+// readSpectrum reads the blocks of a load spectrum, and the range that they span.
+func readSpectrum(f field) ([]planner.Block, quantity.Range) {
+	var blocks []planner.Block
+	var span quantity.Range
+	for i, item := range f.items("block") {
+		o := item.object("axial", "cycles")
+		o.require("axial", "0 to 9.5 kN")
+		o.require("cycles", "2e6")
+		b := planner.Block{Cycles: o.some("cycles", quantity.Number)}
+		if o.stated("axial") {
+			axial := o.at("axial").span(quantity.Force)
+			b.Low, b.High = axial.Low, axial.High
+		}
+		if i == 0 {
+			span = quantity.Range{Low: b.Low, High: b.High}
+		}
+		span = quantity.Range{Low: min(span.Low, b.Low), High: max(span.High, b.High)}
+		blocks = append(blocks, b)
+	}
+	if len(blocks) == 0 && f.node.kind == list {
+		f.wrong("spectrum is empty", "list at least one block: {axial: 0 to 9.5 kN, cycles: 1e5}")
+	}
+	return blocks, span
+}
+
+// readIntroduction reads where the load enters the parts.
+func readIntroduction(f field) *planner.Introduction {
+	o := f.object("type", "height", "a_k", "l_a")
+	o.require("type", "SV1")
+	o.require("a_k", "4 mm")
+	o.require("l_a", "0 mm")
+	i := planner.Introduction{Height: o.some("height", quantity.Length), Arm: o.one("a_k", quantity.Length), Lead: o.one("l_a", quantity.Length)}
+	if o.stated("type") {
+		i.Type = o.at("type").choice("SV1", "SV2", "SV3", "SV4", "SV5", "SV6")
+	}
+	return &i
+}
+
+// readEccentric reads where bolt and load lie off the axis of the parts.
+func readEccentric(f field) *planner.Eccentric {
+	o := f.object("s_sym", "a", "moment", "depth", "width")
+	o.require("s_sym", "3 mm")
+	o.require("depth", "40 mm")
+	o.require("width", "34 mm")
+	e := planner.Eccentric{BoltOffset: o.one("s_sym", quantity.Length), Depth: o.one("depth", quantity.Length), Width: o.one("width", quantity.Length)}
+	if o.stated("a") {
+		arm := o.at("a").quantity(quantity.Length)
+		e.LoadArm = &arm
+	}
+	if o.stated("moment") {
+		moment := o.at("moment").span(quantity.Torque)
+		e.MomentLow, e.MomentHigh = moment.Low, moment.High
+	}
+	return &e
+}
+
 func readTemperature(f field) *planner.Temperature {
 	o := f.object("assembly", "service", "states")
 	var t planner.Temperature
 	if o.require("assembly", "20 degC") {
-		t.Assembly = o.at("assembly").quantity(quantity.Temperature)
+		t.Assembly = o.at("assembly").span(quantity.Temperature)
 	}
 	if o.stated("states") {
 		if o.stated("service") {
@@ -78,7 +142,7 @@ func readTemperature(f field) *planner.Temperature {
 		t.States = readThermalStates(o.at("states"))
 		return &t
 	}
-	if o.require("service", "90 degC") {
+	if o.d.knows(o.pathOf("states")) && o.require("service", "90 degC") {
 		t.Service = o.at("service").span(quantity.Temperature)
 	}
 	return &t

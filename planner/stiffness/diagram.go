@@ -11,17 +11,20 @@ import (
 // line falls from the preload point at 1/ClampedCompliance.
 type Diagram struct {
 	BoltCompliance    float64        // delta_S, mm/N
-	ClampedCompliance float64        // delta_P, mm/N
+	ClampedCompliance float64        // delta_P, mm/N; of parts clamped off their axis delta_P*
+	Eccentric         bool           // clamped or loaded off the axis of the parts
 	Preload           quantity.Range // assembly preload that the setting gives
 	Embedding         float64        // F_Z, N
 	Closing           float64        // F_L, N: by layers that get thinner
 	Loss              float64        // all that the lowest preload loses in service, N: embedding, closing, temperature, time
 	Gain              float64        // what temperature adds to the highest preload, N
 	Axial             quantity.Range // operating force
-	Cyclic            bool           // the operating force swings between the ends of Axial
+	ClampAxial        float64        // operating force of the bolt whose clamp is needed most, N; in a group not always the highest
+	Swinging          quantity.Range // ends of the largest swing of a cyclic force, N; no width: static
 	LoadFactor        float64        // Phi
-	BoltShare         float64        // Phi F_Amax, N: added to the bolt
-	ClampShare        float64        // (1 - Phi) F_Amax, N: taken from the clamp
+	Moment            quantity.Range // what a working moment adds to the bolt at the ends of the load, N
+	BoltShare         float64        // Phi F_Amax and what the moment adds, N: added to the bolt
+	ClampShare        float64        // (1 - Phi) F_A of that bolt, N: taken from the clamp
 	ResidualClamp     quantity.Range // left in service
 	RequiredResidual  float64        // F_Kerf
 	Limit             float64        // F_lim
@@ -76,11 +79,28 @@ func (d Diagram) Under(preload, load float64) State {
 	return State{Length: length + share*(1-d.LoadFactor)*d.total(), Bolt: preload + share, Clamp: preload + share - load}
 }
 
+// With adds what a working moment gives the bolt (N), above its point. An open or slack
+// joint is left as it is.
+func (d Diagram) With(s State, moment float64) State {
+	if s.Open || s.Slack {
+		return s
+	}
+	s.Bolt += moment
+	return s
+}
+
 // Swing returns the states between which a cyclic force moves the joint at its lowest
 // preload after losses; false where the force does not swing.
 func (d Diagram) Swing() (low, high State, ok bool) {
-	if !d.Cyclic || d.Axial.Width() <= 0 {
+	if d.Swinging.Width() <= 0 {
 		return State{}, State{}, false
 	}
-	return d.Under(d.Least(), d.Axial.Low), d.Under(d.Least(), d.Axial.High), true
+	least := d.Least()
+	return d.With(d.Under(least, d.Swinging.Low), d.Moment.Low), d.With(d.Under(least, d.Swinging.High), d.Moment.High), true
+}
+
+// Largest returns the state at the highest preload with what temperature adds, under
+// the highest operating force: where the bolt force is largest.
+func (d Diagram) Largest() State {
+	return d.With(d.Under(d.Most(), math.Max(0, d.Axial.High)), math.Max(0, d.Moment.High))
 }

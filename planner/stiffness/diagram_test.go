@@ -69,15 +69,20 @@ func TestForcesBalance(t *testing.T) {
 func TestSwing(t *testing.T) {
 	d := spring(0.25)
 	d.Preload, d.Loss = quantity.Range{Low: 43000, High: 60000}, 3000
-	d.Axial = quantity.Range{Low: -4000, High: 8000}
 	_, _, ok := d.Swing()
 	assert.False(t, ok, "static")
-	d.Cyclic = true
+	d.Swinging = quantity.Range{Low: -4000, High: 8000}
 	low, high, ok := d.Swing()
 	assert.True(t, ok)
 	assert.InDelta(t, 39000, low.Bolt, 1e-9)
 	assert.InDelta(t, 42000, high.Bolt, 1e-9)
-	d.Axial = quantity.Single(8000)
+	d.Moment = quantity.Range{Low: -200, High: 300}
+	low, high, _ = d.Swing()
+	assert.InDelta(t, 38800, low.Bolt, 1e-9, "with a working moment")
+	assert.InDelta(t, 42300, high.Bolt, 1e-9)
+	d.Axial.High, d.Gain = 8000, 1000
+	assert.InDelta(t, 63300, d.Largest().Bolt, 1e-9)
+	d.Swinging = quantity.Single(8000)
 	_, _, ok = d.Swing()
 	assert.False(t, ok, "a constant load does not swing")
 }

@@ -10,10 +10,6 @@ import (
 	"clampback/report/figure"
 )
 
-// rolledAfter says how threads were rolled: before heat treatment, which endures
-// less, as a joint cannot say yet.
-const rolledAfter = false
-
 // calculation returns the blocks of the engineer's page: the joint diagram, of a
 // cyclic load the fatigue diagrams, what binds, the work-back, the window, the checks
 // and the assumptions.
@@ -30,7 +26,7 @@ func (d *document) calculation(p planner.Plan) []block {
 		figure.JointDiagram(d.canvas, p, figure.Box{X: d.left(), Y: y, Width: d.wide(), Height: height}, say)
 	}}
 	blocks = append(blocks, diagram)
-	if f, ok := planner.FatigueDiagram(p, rolledAfter); ok {
+	if f, ok := planner.FatigueDiagram(p); ok {
 		blocks = append(blocks, d.fatigue(p, f))
 	}
 	blocks = append(blocks, d.flow(say("calc_binds"), plainItems(p.Binds), d.small())...)
@@ -47,7 +43,11 @@ func (d *document) fatigue(p planner.Plan, f stiffness.FatigueDiagram) block {
 	if f.RolledAfter {
 		rolled = say("fatigue_after")
 	}
-	text := say("fatigue_caption", "rolled", rolled, "cycles", figure.Cycles(f.Cycles))
+	key := "fatigue_caption"
+	if f.Spectrum {
+		key = "fatigue_caption_spectrum"
+	}
+	text := say(key, "rolled", rolled, "cycles", figure.Cycles(f.Cycles))
 	if p.ResidualClamp.Lowest < 0 {
 		text += " " + say("fatigue_opens")
 	}
@@ -73,15 +73,17 @@ func (d *document) twoLists(p planner.Plan) block {
 		{"+ " + say("calc_thermal"), kilo(quantity.RoundUp(b.ThermalLoss, 10))},
 	}
 	for _, loss := range []struct {
-		key   string
-		force float64
+		key    string
+		newton float64
 	}{{"calc_closing", b.ClosingLoss}, {"calc_softening", b.SofteningLoss}, {"calc_relaxation", b.RelaxationLoss}} {
-		if loss.force > 0 {
-			rows = append(rows, [2]string{"+ " + say(loss.key), kilo(quantity.RoundUp(loss.force, 10))})
+		if loss.newton > 0 {
+			rows = append(rows, [2]string{"+ " + say(loss.key), kilo(quantity.RoundUp(loss.newton, 10))})
 		}
 	}
-	rows = append(rows, [2]string{"= " + say("calc_required"), kilo(quantity.RoundUp(b.RequiredPreload, 10))},
-		[2]string{say("calc_limit"), kilo(quantity.RoundDown(p.Preload.Limit, 10))})
+	rows = append(rows, [][2]string{
+		{"= " + say("calc_required"), kilo(quantity.RoundUp(b.RequiredPreload, 10))},
+		{say("calc_limit"), kilo(quantity.RoundDown(p.Preload.Limit, 10))},
+	}...)
 	setting := d.newList(say("calc_setting"), plainItems(d.settingLines(p)), half, d.small())
 	line := d.mm(smallSize) * lineHeight
 	head := d.mm(smallSize) * headingHeight

@@ -41,8 +41,12 @@ func (d *document) what(p planner.Plan) block {
 		count = d.words.say("bolts_many", "count", strconv.Itoa(p.Count))
 	}
 	b := j.Bolt
+	key := "bolt_line"
+	if j.HeadNut != nil {
+		key = "stud_line"
+	}
 	lines := []string{
-		d.words.say("bolt_line", "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head", b.Head.Kind,
+		d.words.say(key, "thread", b.Thread.Designation, "length", quantity.Trim(b.Length), "head", headWord(j),
 			"standard", b.Head.Standard, "class", b.Class.Name) + ". " + d.spanner(p),
 		d.mating(j),
 		d.washers(j),
@@ -63,6 +67,14 @@ func (d *document) what(p planner.Plan) block {
 	}}
 }
 
+// headWord names the head, or the nut that is turned in its place.
+func headWord(j planner.Joint) string {
+	if j.HeadNut != nil {
+		return j.HeadNut.Kind
+	}
+	return j.Bolt.Head.Kind
+}
+
 func (d *document) spanner(p planner.Plan) string {
 	h := p.Joint.Bolt.Head
 	key := "spanner"
@@ -74,6 +86,12 @@ func (d *document) spanner(p planner.Plan) string {
 
 // mating says what the bolt goes into.
 func (d *document) mating(j planner.Joint) string {
+	if j.HeadNut != nil && j.Nut != nil {
+		return d.words.say("nuts_line", "kind", j.Nut.Kind, "standard", j.Nut.Standard, "class", j.Bolt.Class.NutClass())
+	}
+	if j.LockNut != nil {
+		return d.words.say("lock_line", "thin", j.LockNut.Standard, "kind", j.Nut.Kind, "standard", j.Nut.Standard, "class", j.Bolt.Class.NutClass())
+	}
 	if j.Nut == nil {
 		return d.words.say("tapped_line", "material", j.Tapped.Material.Name)
 	}

@@ -13,12 +13,20 @@ func (d *document) steps(p planner.Plan) []item {
 	say := d.words.say
 	snug, target := quantity.Trim(p.Angle.SnugTorque), quantity.Trim(p.Torque.Target)
 	items := []item{{text: say("step_read")}, {text: say("step_parts")}}
+	if heat := p.Joint.Temperature; len(heat.States) > 0 || heat.Service != heat.Assembly {
+		t := heat.Assembly
+		text := say("step_temperature_one", "low", quantity.Trim(t.Low))
+		if !t.IsSingle() {
+			text = say("step_temperature", "low", quantity.Trim(t.Low), "high", quantity.Trim(t.High))
+		}
+		items = append(items, item{text: text})
+	}
 	if p.Joint.Friction.State != "" {
 		items = append(items, item{text: say("step_lubricate")})
 	}
 	items = append(items, item{text: say("step_hand")})
-	if p.Joint.Nut != nil {
-		items = append(items, item{text: say("step_hold")})
+	if key := held(p.Joint); key != "" {
+		items = append(items, item{text: say(key)})
 	}
 	first := item{lead: say("step_set", "torque", snug), text: say("step_snug")}
 	switch {
@@ -38,6 +46,22 @@ func (d *document) steps(p planner.Plan) []item {
 		items[i].mark = strconv.Itoa(i + 1)
 	}
 	return items
+}
+
+// held names the step that says what is held and what is turned; none where a bolt
+// goes into a tapped part.
+func held(j planner.Joint) string {
+	switch {
+	case j.HeadNut != nil && j.Tapped != nil:
+		return "step_stud_tapped"
+	case j.HeadNut != nil:
+		return "step_stud_through"
+	case j.LockNut != nil:
+		return "step_lock"
+	case j.Nut != nil:
+		return "step_hold"
+	}
+	return ""
 }
 
 // inwards prints the ends of a range rounded inwards, to the coarsest of the

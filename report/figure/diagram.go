@@ -73,16 +73,28 @@ func newDiagram(c Canvas, d stiffness.Diagram, box Box, say Words) *diagram {
 	}
 	top := math.Max(d.Limit, math.Max(d.RequiredResidual, d.Most()))
 	_, reach := d.Unloaded(math.Max(d.Most(), d.Preload.Low))
-	tension, compression := d.Under(d.Least(), math.Max(0, d.Axial.High)), d.Under(d.Least(), math.Min(0, d.Axial.Low))
-	for _, s := range []stiffness.State{tension, compression, d.Under(d.Most(), math.Max(0, d.Axial.High))} {
+	states := []stiffness.State{g.pulled(), d.Under(d.Least(), math.Min(0, d.Axial.Low)), d.Largest()}
+	tension, compression := states[0].Length, states[1].Length
+	if low, high, ok := d.Swing(); ok {
+		states = append(states, low, high)
+		tension = math.Max(tension, math.Max(low.Length, high.Length))
+	}
+	for _, s := range states {
 		top = math.Max(top, math.Max(s.Bolt, s.Clamp))
 		reach = math.Max(reach, s.Length)
+		compression = math.Min(compression, s.Length)
 	}
 	// A joint of nothing is drawn on empty axes.
 	const leastForce, leastLength = 1e-3, 1e-6 // N, mm
-	g.widen(math.Max(1.04*reach, leastLength), compression.Length, tension.Length)
+	g.widen(math.Max(1.04*reach, leastLength), compression, tension)
 	g.high = math.Max(1.06*top, leastForce)
 	return g
+}
+
+// pulled is the lowest preload after losses under the load of the bolt whose clamp is
+// needed most.
+func (g *diagram) pulled() stiffness.State {
+	return g.d.With(g.d.Under(g.d.Least(), math.Max(0, g.d.ClampAxial)), math.Max(0, g.d.Moment.High))
 }
 
 // widen sets the ends of the length axis: to hold zero and a reach, and beside the
@@ -93,7 +105,7 @@ func (g *diagram) widen(reach, compression, tension float64) {
 	if g.d.Axial.Low < 0 {
 		before = (loadColumn + 0.5) * g.size / g.plot.Width
 	}
-	if g.d.Axial.High > 0 || g.d.Cyclic {
+	if _, _, ok := g.d.Swing(); ok || g.d.ClampAxial > 0 {
 		behind = (waveColumn + waveLength) * g.size / g.plot.Width
 	}
 	// Each end moves a little further when the other does: by far less each time.
@@ -138,7 +150,11 @@ func (g *diagram) springs() {
 	g.line(bolt, low, end, 0, heavy)
 	g.line(g.left, low, bolt, low, dotted)
 	named := 0.08 * low
-	g.noteAt(end-named*g.d.ClampedCompliance, named, true, "diagram_parts", "compliance", compliance(g.d.ClampedCompliance))
+	parts := "diagram_parts"
+	if g.d.Eccentric {
+		parts = "diagram_parts_eccentric"
+	}
+	g.noteAt(end-named*g.d.ClampedCompliance, named, true, parts, "compliance", compliance(g.d.ClampedCompliance))
 }
 
 // losses draws what takes the lowest preload down to F_V: embedding, closing layers
@@ -176,21 +192,18 @@ func (g *diagram) losses(overTime bool) {
 // tension draws a tensile operating force at the lowest preload after losses: the
 // share that the bolt carries above, the share that relieves the clamp below.
 func (g *diagram) tension() {
-	load := g.d.Axial.High
+	load := g.d.ClampAxial
 	if load <= 0 {
 		g.noteAt(g.right, math.Max(0, g.d.ResidualClamp.Low), false, "diagram_clamp", "force", kilo(g.d.ResidualClamp.Low, false))
 		return
 	}
-	low := math.Max(0, g.d.Least())
-	s := g.d.Under(low, load)
+	low, s := math.Max(0, g.d.Least()), g.pulled()
 	g.path(low, s)
-	boltKey, clampKey := "diagram_bolt_load", "diagram_clamp_load"
-	boltShare, clampShare := g.d.BoltShare, g.d.ClampShare
+	boltKey, clampKey, clampShare := "diagram_bolt_load", "diagram_clamp_load", g.d.ClampShare
 	if s.Open {
-		boltKey, clampKey = "diagram_bolt_open", "diagram_clamp_open"
-		boltShare, clampShare = s.Bolt-low, low
+		boltKey, clampKey, clampShare = "diagram_bolt_open", "diagram_clamp_open", low
 	}
-	g.noteAt(s.Length, s.Bolt, true, boltKey, "force", kilo(s.Bolt, true), "share", kilo(boltShare, true))
+	g.noteAt(s.Length, s.Bolt, true, boltKey, "force", kilo(s.Bolt, true), "share", kilo(s.Bolt-low, true))
 	g.noteAt(s.Length, s.Clamp, true, clampKey, "force", kilo(g.d.ResidualClamp.Low, false), "share", kilo(clampShare, true))
 	g.shares(low, s, load, g.size)
 }
@@ -240,8 +253,9 @@ func (g *diagram) shares(preload float64, s stiffness.State, load, column float6
 		to.X = from.X
 		g.arrowOnPage(from, to, bold)
 	}
-	g.line(s.Length, s.Clamp, s.Length, s.Bolt, dotted)
-	middle := g.span(s.Length, s.Clamp, s.Bolt, loadColumn*column)
+	// The bolt may hold more than the load adds: what a working moment does.
+	g.line(s.Length, s.Clamp, s.Length, s.Clamp+load, dotted)
+	middle := g.span(s.Length, s.Clamp, s.Clamp+load, loadColumn*column)
 	g.notes = append(g.notes, note{middle, true, g.say("diagram_load", "force", signed(load))})
 }
 
@@ -270,8 +284,7 @@ func (g *diagram) swing() {
 // largest draws the largest bolt force, at the highest preload with what temperature
 // adds.
 func (g *diagram) largest() {
-	most := g.d.Most()
-	s := g.d.Under(most, math.Max(0, g.d.Axial.High))
+	most, s := g.d.Most(), g.d.Largest()
 	if most <= 0 || s.Open {
 		return // the load alone, which stands beside its shares
 	}

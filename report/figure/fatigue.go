@@ -41,6 +41,10 @@ func Haigh(c Canvas, d stiffness.FatigueDiagram, box Box, say Words) {
 	g.mark(g.keyPlace())
 	g.key(Stroke{}, say("fatigue_operating", "mean", stress(d.Operating.Mean, true),
 		"amplitude", stress(d.Operating.Amplitude, true)))
+	if d.Spectrum {
+		g.key(dotted, say("fatigue_safety_only", "safety", safety(d)))
+		return
+	}
 	g.key(dotted, say("fatigue_safety", "safety", safety(d), "demanded", quantity.Trim(d.Demanded)))
 }
 

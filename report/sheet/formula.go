@@ -62,6 +62,7 @@ func countRepeated(trace []planner.Line) numbers {
 //	{sum x}          x_1+x_2+...
 //	{list x}         x_1,x_2,...
 //	{products x y}   x_1*y_1+x_2*y_2+...
+//	{each x f}       f for each number of x, # in it replaced, added up
 //	{opt x y}        x when the plan has the symbol, y when not
 //
 // # in a symbol stands for the index.
@@ -87,27 +88,62 @@ func (n numbers) expand(formula string, index int) (string, error) {
 }
 
 func (n numbers) placeholder(p string, index int) (string, error) {
-	words := strings.Fields(strings.ReplaceAll(p, "#", strconv.Itoa(index)))
-	switch {
-	case p == "i" && index > 0:
-		return strconv.Itoa(index), nil
-	case len(words) == 2 && words[0] == "before" && index > 0:
-		if index == 1 {
-			return "0", nil
+	words := strings.Fields(p)
+	if len(words) == 3 && words[0] == "each" && n[words[1]] > 0 {
+		return n.each(words[1], words[2]), nil
+	}
+	words = strings.Fields(strings.ReplaceAll(p, "#", strconv.Itoa(index)))
+	if index > 0 {
+		switch {
+		case p == "i":
+			return strconv.Itoa(index), nil
+		case len(words) == 2 && words[0] == "before":
+			return before(words[1], index), nil
 		}
-		return words[1] + "_" + strconv.Itoa(index-1), nil
-	case len(words) == 2 && (words[0] == "sum" || words[0] == "list") && n[words[1]] > 0:
-		separator := map[string]string{"sum": "+", "list": ","}[words[0]]
-		return n.join(separator, words[1]), nil
-	case len(words) == 3 && words[0] == "products" && n[words[1]] > 0 && n[words[1]] == n[words[2]]:
-		return n.join("+", words[1], words[2]), nil
-	case len(words) == 3 && words[0] == "opt":
-		if _, has := n[words[1]]; has {
-			return words[1], nil
+	}
+	return n.ofSymbols(p, words)
+}
+
+// ofSymbols fills a placeholder that does not rest on the line's own number.
+func (n numbers) ofSymbols(p string, words []string) (string, error) {
+	if len(words) == 3 && words[0] == "opt" {
+		return n.either(words[1], words[2]), nil
+	}
+	if len(words) > 1 && n[words[1]] > 0 {
+		switch {
+		case len(words) == 2 && words[0] == "sum":
+			return n.join("+", words[1]), nil
+		case len(words) == 2 && words[0] == "list":
+			return n.join(",", words[1]), nil
+		case len(words) == 3 && words[0] == "products" && n[words[1]] == n[words[2]]:
+			return n.join("+", words[1], words[2]), nil
 		}
-		return words[2], nil
 	}
 	return "", fmt.Errorf("the placeholder {%s} cannot be filled", p)
+}
+
+func before(symbol string, index int) string {
+	if index == 1 {
+		return "0"
+	}
+	return symbol + "_" + strconv.Itoa(index-1)
+}
+
+// each adds up a term for each number of a symbol.
+func (n numbers) each(symbol, term string) string {
+	terms := make([]string, n[symbol])
+	for i := range terms {
+		terms[i] = strings.ReplaceAll(term, "#", strconv.Itoa(i+1))
+	}
+	return strings.Join(terms, "+")
+}
+
+// either returns a symbol where the plan has it, and what stands for it where not.
+func (n numbers) either(symbol, other string) string {
+	if _, has := n[symbol]; has {
+		return symbol
+	}
+	return other
 }
 
 // join writes one term for each number of the first symbol: the product of all

@@ -2,6 +2,7 @@
 package demo
 
 import (
+	"io/fs"
 	"os"
 	"path/filepath"
 	"runtime"
@@ -15,11 +16,17 @@ import (
 func Joints(t testing.TB) []planner.Joint {
 	t.Helper()
 	_, here, _, _ := runtime.Caller(0)
-	data, err := os.ReadFile(filepath.Join(filepath.Dir(here), "..", "..", "..", "testdata", "demo", "tarn40.yaml"))
-	if err != nil {
-		t.Fatal(err)
+	folder := os.DirFS(filepath.Join(filepath.Dir(here), "..", "..", "..", "testdata", "demo"))
+	open := func(name string) ([]byte, error) { return fs.ReadFile(folder, name) }
+	var sources []register.Source
+	for _, name := range []string{"tarn40.yaml", "tarn40-pipework.yaml"} {
+		data, err := open(name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		sources = append(sources, register.Source{Name: name, Data: data, Open: open})
 	}
-	joints, err := register.Read(register.Source{Name: "tarn40.yaml", Data: data})
+	joints, err := register.Read(sources...)
 	if err != nil {
 		t.Fatal(err)
 	}
