@@ -175,12 +175,16 @@ func (w *work) given() (Torque, Angle) {
 
 // diagram gathers the points the joint diagram is drawn from.
 func (w *work) diagram() stiffness.Diagram {
-	return stiffness.Diagram{
+	d := stiffness.Diagram{
 		BoltCompliance:    w.boltCompliance,
 		ClampedCompliance: w.clampedCompliance,
 		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
+		Embedding:         w.embedding,
+		Closing:           w.closing,
 		Loss:              w.lowest - w.lowestClamp - w.relief,
+		Gain:              w.thermalGain,
 		Axial:             quantity.Range{Low: w.axial.low, High: w.axial.high},
+		ClampAxial:        w.axial.clamp,
 		LoadFactor:        w.loadFactor,
 		BoltShare:         w.boltShare,
 		ClampShare:        w.relief,
@@ -188,6 +192,14 @@ func (w *work) diagram() stiffness.Diagram {
 		RequiredResidual:  w.residualClamp,
 		Limit:             w.tolerated,
 	}
+	if w.joint.Loads.cyclic() {
+		d.Swinging = quantity.Range{Low: w.axial.swingLo, High: w.axial.swingHi}
+	}
+	if e := w.joint.Eccentric; e != nil {
+		d.Eccentric, d.ClampedCompliance = true, w.eccentricClamping
+		d.Moment = quantity.Range{Low: w.momentFactor * e.MomentLow, High: w.momentFactor * e.MomentHigh}
+	}
+	return d
 }
 
 // angleRange is the window of the angle setting, where the angle is set.
