@@ -3,6 +3,7 @@ package planner
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"clampback/planner/fastener"
 	"clampback/planner/quantity"
@@ -124,6 +125,9 @@ func (w *work) assumeMethod() {
 	if j.Nut != nil && j.NutClass == "" {
 		w.assumed(fmt.Sprintf("the nut matches the bolt (class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
+	if j.Loads.cyclic() {
+		w.assumeFatigue()
+	}
 	if j.Loads.cyclic() && !j.Bolt.RolledAfter {
 		w.assumed("thread rolled before heat treatment (the lower fatigue limit)")
 	}
@@ -215,6 +219,18 @@ func (j Joint) thinnestPart() float64 {
 		thinnest = math.Min(thinnest, p.Thickness)
 	}
 	return thinnest
+}
+
+// assumeFatigue says where the fatigue limit of the guideline is used beyond what it was
+// found on: bolts of 8.8 to 12.9 up to M40 (from memory).
+func (w *work) assumeFatigue() {
+	class, d := w.joint.Bolt.Class.Name, w.joint.Bolt.Thread.Diameter
+	if !slices.Contains([]string{"8.8", "9.8", "10.9", "12.9"}, class) {
+		w.assumed("the fatigue limit is the guideline's for classes 8.8 to 12.9; that class " + class + " reaches it must be shown by other means")
+	}
+	if d > 40 {
+		w.assumed("the fatigue limit is the guideline's for threads up to 40 mm; larger ones endure less")
+	}
 }
 
 // turnedBy says which member is turned, on whose face the torque was reckoned.

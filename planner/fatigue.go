@@ -88,9 +88,9 @@ func (b Bolt) rolled() string {
 	return "before heat treatment"
 }
 
-// meanForce is F_Sm, the mean bolt force at the highest preload.
+// meanForce is F_Sm, the mean bolt force at the highest preload, with what heat adds.
 func (w *work) meanForce() float64 {
-	return w.highest + w.loadFactor*(w.axial.swingHi+w.axial.swingLo)/2
+	return w.highest + w.thermalGain + w.loadFactor*(w.axial.swingHi+w.axial.swingLo)/2
 }
 
 // yielding is F_0.2min over the stress area, MPa: of a waisted bolt below R_p0.2.

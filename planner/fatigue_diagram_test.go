@@ -130,7 +130,7 @@ func TestFatigueDiagramOfPlan(t *testing.T) {
 		require.Equal(t, j.Loads.Cycles == 0, d.Spectrum)
 		require.InEpsilon(t, line(t, p, "sigma_a")+1, d.Operating.Amplitude+1, 1e-9)
 		axial := j.Loads.Axial
-		mean := (p.Preload.Highest + p.Stiffness.LoadFactor*axial.Middle()) / line(t, p, "A_S")
+		mean := (p.Preload.Highest + line(t, p, "dF_gain") + p.Stiffness.LoadFactor*axial.Middle()) / line(t, p, "A_S")
 		require.InDelta(t, mean, d.Operating.Mean, 1e-9*math.Abs(mean)+1e-9)
 		for limit, got := range map[float64]float64{line(t, p, "sigma_lim"): d.Limit, line(t, p, "sigma_AS"): d.LeastLimit} {
 			if d.Operating.Mean+limit <= d.Yield {

@@ -271,7 +271,8 @@ func (g *diagram) swing() {
 	at := func(i int) Point {
 		angle := 2 * math.Pi * waves * float64(i) / steps
 		middle, amplitude := (low.Bolt+high.Bolt)/2, (high.Bolt-low.Bolt)/2
-		return Point{start + length*float64(i)/steps, g.at(0, middle+amplitude*math.Sin(angle)).Y}
+		y := g.at(0, middle+amplitude*math.Sin(angle)).Y
+		return Point{start + length*float64(i)/steps, min(max(y, g.plot.Y), g.plot.Y+g.plot.Height)} // what goes beyond is cut
 	}
 	for i := range steps {
 		p, q := at(i), at(i+1)

@@ -251,6 +251,16 @@ func (b *book) writeLists(w *writer, p planner.Plan) error {
 		heading string
 		lines   []string
 	}{{"What binds, as planned", p.Binds}, {"Assumptions, as planned", p.Assumptions}}
+	if len(p.Governing) > 0 {
+		var who []string
+		for _, g := range p.Governing {
+			who = append(who, fmt.Sprintf("%s: bolt %d in load case %s", g.For, g.Bolt, g.Case))
+		}
+		lists = append(lists, struct {
+			heading string
+			lines   []string
+		}{"What governs, as planned: with other loads another bolt may, so plan anew", who})
+	}
 	for _, l := range lists {
 		if err := w.put(); err != nil {
 			return err
