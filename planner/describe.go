@@ -47,8 +47,12 @@ func (w *work) describeThread() {
 	t := w.joint.Bolt.Thread
 	n := &w.thread
 	n.diameter, n.pitch = t.Diameter, t.Pitch
-	w.input("d", "thread diameter", t.Diameter, "mm", "ISO 261")
-	w.input("P", "pitch", t.Pitch, "mm", "ISO 261")
+	source := "ISO 261"
+	if t.Own {
+		source = t.Source
+	}
+	w.input("d", "thread diameter", t.Diameter, "mm", source)
+	w.input("P", "pitch", t.Pitch, "mm", source)
 	n.pitchDiameter = w.line("d_2", "pitch diameter", t.PitchDiameter(), "mm", iso724)
 	n.minorDiameter = w.line("d_3", "minor diameter", t.MinorDiameter(), "mm", "ISO 68-1")
 	n.stressArea = w.line("A_S", "stress area of the thread", t.StressArea(), "mm2", iso898)

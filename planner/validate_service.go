@@ -60,13 +60,25 @@ func (v *validator) heat(j Joint) {
 			part--
 		}
 		if part < 0 || part >= len(j.Parts) {
-			continue // washers are steel, which the tables follow further than any bolt
+			v.washerHeat(l, part, parts)
+			continue
 		}
 		_, _, known := layerSoftness(l, parts)
 		v.require(known, at("temperature", itemOf("clamped", part, "material").path()),
 			fmt.Sprintf("state clamped[%d].hot_modulus, the modulus of that part at its highest temperature", part),
 			"%g degC lies beyond the data for the modulus of %s", parts, l.name)
 	}
+}
+
+// washerHeat judges a washer; the tables follow their steel further than any bolt.
+func (v *validator) washerHeat(l layer, part int, highest float64) {
+	key := "washers.head"
+	if part >= 0 {
+		key = "washers.nut"
+	}
+	_, _, known := layerSoftness(l, highest)
+	v.require(known, at("temperature", key, "bolt.thread"), "list the washer as a clamped part with its hot_modulus",
+		"%g degC lies beyond the data for the modulus of the %s", highest, l.name)
 }
 
 func (v *validator) boltHeat(j Joint, highest float64) {

@@ -18,6 +18,9 @@ type Thread struct {
 	Diameter    float64 // d, mm
 	Pitch       float64 // P, mm
 	Coarse      bool
+
+	Own    bool   // of a user's own library, with the same profile
+	Source string // of an own thread; else ISO 261
 }
 
 // ParseThread reads a designation of ISO 965-1: "M12" is the coarse thread,
