@@ -64,7 +64,9 @@ func (v *validator) bearing(diameter float64, t fastener.Thread) {
 // WasherFaults returns what is impossible about an own washer of that thread.
 func WasherFaults(w fastener.Washer, t fastener.Thread) []Fault {
 	v := &validator{}
-	v.require(w.InnerDiameter >= t.Diameter, at("inner_diameter", "thread"), "state the hole of the washer: at least the thread's diameter",
+	const hole = "state the hole of the washer: at least the thread's diameter"
+	v.positive(w.InnerDiameter, lengths, at("inner_diameter"), "the inner diameter", hole)
+	v.require(!(w.InnerDiameter > 0) || w.InnerDiameter >= t.Diameter, at("inner_diameter", "thread"), hole,
 		"the inner diameter of %s is smaller than the thread of %s", mm(w.InnerDiameter), mm(t.Diameter))
 	v.require(w.OuterDiameter > w.InnerDiameter, at("outer_diameter", "inner_diameter"), "state the outer diameter of the washer",
 		"the outer diameter of %s is not larger than the inner one of %s", mm(w.OuterDiameter), mm(w.InnerDiameter))

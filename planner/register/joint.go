@@ -80,10 +80,10 @@ func readBolt(f field) planner.Bolt {
 	var b planner.Bolt
 	switch {
 	case !o.require("thread", "M12"):
-	case isInchThread(o.word("thread")):
+	case !f.d.library.threads.has(o.word("thread")) && isInchThread(o.word("thread")):
 		o.at("thread").wrong("inch threads are not planned by this version", "state an ISO metric thread, for example M12")
 	default:
-		b.Thread = lookUp(o.at("thread"), fastener.ParseThread)
+		b.Thread = lookUp(o.at("thread"), f.d.library.findThread)
 	}
 	if o.require("length", "60 mm") {
 		b.Length = o.at("length").quantity(quantity.Length)
@@ -124,7 +124,7 @@ func readHead(o *object, b *planner.Bolt) {
 	}
 	if hasHead {
 		b.Head = lookUp(o.at("head"), func(kind string) (fastener.Head, error) {
-			head, err := fastener.FindHead(kind, b.Thread)
+			head, err := o.d.library.findHead(kind, b.Thread)
 			var unknown *fastener.UnknownError
 			if errors.As(err, &unknown) {
 				unknown.Known = append(slices.Clone(unknown.Known), "stud")
@@ -134,7 +134,7 @@ func readHead(o *object, b *planner.Bolt) {
 	}
 	if hasClass {
 		b.Class = lookUp(o.at("property_class"), func(name string) (fastener.PropertyClass, error) {
-			return fastener.FindClass(name, b.Thread)
+			return o.d.library.findClass(name, b.Thread)
 		})
 	}
 }
@@ -174,7 +174,7 @@ func readEnds(o *object, j *planner.Joint) {
 		}
 		w := &fastener.Washer{}
 		if sized {
-			*w = lookUp(washers.at(key), func(name string) (fastener.Washer, error) { return fastener.FindWasher(name, t) })
+			*w = lookUp(washers.at(key), func(name string) (fastener.Washer, error) { return o.d.library.findWasher(name, t) })
 		}
 		return w
 	}
@@ -192,7 +192,7 @@ func readNut(f field, j *planner.Joint, sized bool) {
 	find := func(f field) *fastener.Nut {
 		n := &fastener.Nut{}
 		if sized {
-			*n = lookUp(f, func(kind string) (fastener.Nut, error) { return fastener.FindNut(kind, t) })
+			*n = lookUp(f, func(kind string) (fastener.Nut, error) { return f.d.library.findNut(kind, t) })
 		}
 		return n
 	}
@@ -265,10 +265,10 @@ func readParts(f field) []planner.Part {
 	return parts
 }
 
-// readMaterial reads a name of the library or a mapping of properties.
+// readMaterial reads a name of the tables or the library, or a mapping of properties.
 func readMaterial(f field) fastener.Material {
 	if f.node.kind != mapping {
-		return lookUp(f, fastener.FindMaterial)
+		return lookUp(f, f.d.library.findMaterial)
 	}
 	o := f.object("modulus", "bearing_pressure", "expansion", "shear_strength", "tensile_strength")
 	o.require("modulus", "205 GPa")
