@@ -115,12 +115,15 @@ func (w *work) assumeMethod() {
 	if j.Friction.State == "" {
 		w.assumed("lubrication not stated: the friction range holds only for the state it was found with")
 	}
+	for _, c := range j.Bolt.Class.Cautions() {
+		w.assumed("caution: " + c.Text + " (" + c.Source + ", from memory)")
+	}
 	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
 	w.assumeHeat()
 	w.assumeThread()
 	w.assumeOwn()
 	if j.Nut != nil && j.NutClass == "" {
-		w.assumed(fmt.Sprintf("the nut matches the bolt (ISO 898-2: class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
+		w.assumed(fmt.Sprintf("the nut matches the bolt (class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}
 	if j.Loads.cyclic() && !j.Bolt.RolledAfter {
 		w.assumed("thread rolled before heat treatment (the lower fatigue limit)")
@@ -239,7 +242,11 @@ func (w *work) assumeThread() {
 		w.assumed("the tapped part is wide enough not to widen under load (1.9 d and more)")
 	}
 	if w.strips() {
-		w.assumed("threads at least material of 6g and 6H")
+		classes := "6g and 6H"
+		if j.Bolt.Thread.Inch {
+			classes = "2A and 2B"
+		}
+		w.assumed("threads at least material of " + classes)
 	}
 	if j.HeadNut != nil {
 		w.assumed("both ends of the stud have the same thread; the nut on the stud matches its class")

@@ -47,15 +47,18 @@ func (w *work) describeThread() {
 	t := w.joint.Bolt.Thread
 	n := &w.thread
 	n.diameter, n.pitch = t.Diameter, t.Pitch
-	source := "ISO 261"
-	if t.Own {
-		source = t.Source
+	series, basic, stress, inch := "ISO 261", iso724, iso898, ""
+	if t.Inch {
+		series, basic, stress, inch = asme, asme, asme, ".inch"
 	}
-	w.input("d", "thread diameter", t.Diameter, "mm", source)
-	w.input("P", "pitch", t.Pitch, "mm", source)
-	n.pitchDiameter = w.line("d_2", "pitch diameter", t.PitchDiameter(), "mm", iso724)
-	n.minorDiameter = w.line("d_3", "minor diameter", t.MinorDiameter(), "mm", "ISO 68-1")
-	n.stressArea = w.line("A_S", "stress area of the thread", t.StressArea(), "mm2", iso898)
+	if t.Own {
+		series = t.Source
+	}
+	w.input("d", "thread diameter", t.Diameter, "mm", series)
+	w.input("P", "pitch", t.Pitch, "mm", series)
+	n.pitchDiameter = w.lineBy("d_2"+inch, "d_2", "pitch diameter", t.PitchDiameter(), "mm", basic)
+	n.minorDiameter = w.lineBy("d_3"+inch, "d_3", "minor diameter", t.MinorDiameter(), "mm", "ISO 68-1")
+	n.stressArea = w.lineBy("A_S"+inch, "A_S", "stress area of the thread", t.StressArea(), "mm2", stress)
 	n.nominalArea = w.line("A_N", "nominal cross-section", t.NominalArea(), "mm2", arithmetic)
 	n.minorArea = w.line("A_d3", "cross-section of the minor diameter", t.MinorArea(), "mm2", arithmetic)
 	w.describePieces()
@@ -68,11 +71,17 @@ func (w *work) describePieces() {
 	n := &w.thread
 	n.stressDiameter = w.joint.Bolt.Thread.StressDiameter()
 	rule := "d_0"
-	for i, s := range w.joint.Bolt.pieces() {
+	if w.joint.Bolt.Thread.Inch {
+		rule += ".inch"
+	}
+	pieces := w.joint.Bolt.pieces()
+	if len(pieces) > 0 {
+		rule += ".shank"
+	}
+	for i, s := range pieces {
 		w.inputAt(i+1, "l_S", "length of the shank in the grip", s.Length, "mm", stated)
 		w.inputAt(i+1, "d_S", "diameter of the shank", s.Diameter, "mm", stated)
 		n.stressDiameter = math.Min(n.stressDiameter, s.Diameter)
-		rule = "d_0.shank"
 	}
 	w.lineBy(rule, "d_0", "diameter of the weakest section", n.stressDiameter, "mm", guideline+"R7")
 }

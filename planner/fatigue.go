@@ -64,7 +64,7 @@ func (w *work) checkFatigue() {
 	life := math.Pow(enduranceCycles/math.Min(math.Max(cycles, fewestCycles), enduranceCycles), 1/w.joint.Bolt.lifeExponent())
 	limit := w.line("sigma_lim", "fatigue limit at the stated cycles", endurance*life, "MPa", guideline+"R9, from memory")
 	w.fatigue = &Fatigue{Rolled: w.joint.Bolt.rolled(), Amplitude: amplitude, Endurance: endurance, Limit: limit / w.joint.Safety.Fatigue,
-		Cycles: cycles, Mean: w.meanForce() / w.thread.stressArea, Yield: w.joint.Bolt.Class.YieldStrength}
+		Cycles: cycles, Mean: w.meanForce() / w.thread.stressArea, Yield: w.joint.Bolt.Class.YieldStrength, Yielding: w.yielding()}
 	w.atMost("fatigue", amplitude, limit/w.joint.Safety.Fatigue, "MPa", guideline+"R9")
 }
 
@@ -77,6 +77,7 @@ type Fatigue struct {
 	Endurance float64 // sigma_AS at 2e6 cycles and this mean stress
 	Limit     float64 // at the stated cycles, the safety factor taken off
 	Yield     float64 // R_p0.2
+	Yielding  float64 // mean stress at which the weakest section of the bolt yields, F_0.2min/A_S
 	Cycles    float64 // 0: a spectrum
 }
 
@@ -90,6 +91,11 @@ func (b Bolt) rolled() string {
 // meanForce is F_Sm, the mean bolt force at the highest preload.
 func (w *work) meanForce() float64 {
 	return w.highest + w.loadFactor*(w.axial.swingHi+w.axial.swingLo)/2
+}
+
+// yielding is F_0.2min over the stress area, MPa: of a waisted bolt below R_p0.2.
+func (w *work) yielding() float64 {
+	return w.joint.Bolt.Class.YieldStrength * w.thread.weakestArea / w.thread.stressArea
 }
 
 // endurance puts down sigma_AS of the thread.
@@ -151,7 +157,7 @@ func (w *work) checkSpectrum(endurance float64) {
 	shortest := w.lineBy("sigma_lim.spectrum", "sigma_lim", "fatigue limit where the finite-life line begins, 1e4 cycles",
 		endurance*math.Pow(enduranceCycles/fewestCycles, 1/exponent), "MPa", guideline+"R9, from memory")
 	w.fatigue = &Fatigue{Rolled: w.joint.Bolt.rolled(), Amplitude: largest, Endurance: endurance, Limit: limit,
-		Mean: w.meanForce() / w.thread.stressArea, Yield: w.joint.Bolt.Class.YieldStrength}
+		Mean: w.meanForce() / w.thread.stressArea, Yield: w.joint.Bolt.Class.YieldStrength, Yielding: w.yielding()}
 	w.atMost("fatigue", largest, shortest/w.joint.Safety.Fatigue, "MPa", guideline+"R9").Rule = "fatigue of a spectrum"
 	w.atMost("fatigue damage", damage, 1, "-", "Palmgren-Miner, elementary")
 }

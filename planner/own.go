@@ -91,7 +91,7 @@ func ClassFaults(c fastener.PropertyClass) []Fault {
 		"state the least yield and the least tensile strength",
 		"the yield strength of %s is above the tensile strength of %s", measured{c.YieldStrength, quantity.Pressure},
 		measured{c.TensileStrength, quantity.Pressure})
-	v.require(c.ShearRatio >= 0 && c.ShearRatio <= 1, at("shear_strength", "tensile"), "state the least shear strength, or leave it out",
+	v.require(c.ShearRatio >= 0 && c.ShearRatio <= 1, at("shear_ratio"), "state shear strength over tensile strength, for example 0.6, or leave it out",
 		"the shear strength is %.4g times the tensile strength; it must lie between 0 and 1", c.ShearRatio)
 	v.elastic(c.Modulus, c.Expansion, at(""))
 	return v.faults
@@ -116,7 +116,7 @@ func (v *validator) own(j Joint) {
 	needsShear := j.slips() || j.Tapped != nil && j.Tapped.Insert == nil || j.NutShear > 0
 	v.require(!needsShear || !b.Class.Own || b.Class.ShearRatio > 0,
 		at("bolt.property_class", "bolt.thread", "clamp", "group", "loads", "tapped", "nut"),
-		"add shear_strength to its entry in your library",
+		"add shear_ratio to its entry in your library",
 		"the shear strength of class %s is not known, by which stripping and shear of the bolt are judged", b.Class.Name)
 	if j.Nut == nil {
 		return

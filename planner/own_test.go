@@ -171,7 +171,7 @@ func TestFaultsOfOwnEntries(t *testing.T) {
 	check("class yield", class(func(c *fastener.PropertyClass) { c.YieldStrength = 0 }), "yield", "the yield strength is 0 MPa")
 	check("class tensile", class(func(c *fastener.PropertyClass) { c.TensileStrength = 0 }), "tensile", "the tensile strength is 0 MPa")
 	check("class above", class(func(c *fastener.PropertyClass) { c.YieldStrength = 1041 }), "yield", "is above the tensile strength of 1040 MPa")
-	check("class shear", class(func(c *fastener.PropertyClass) { c.ShearRatio = 1.1 }), "shear_strength", "1.1 times the tensile strength")
+	check("class shear", class(func(c *fastener.PropertyClass) { c.ShearRatio = 1.1 }), "shear_ratio", "1.1 times the tensile strength")
 	check("class expansion", class(func(c *fastener.PropertyClass) { c.Expansion = 0.01 }), "expansion", "no material has that")
 
 	metal := func(change func(m *fastener.Material)) []planner.Fault {

@@ -102,7 +102,22 @@ type work struct {
 }
 
 func newWork(joint Joint) *work {
-	return &work{joint: joint, trace: make([]Line, 0, 224), checks: make([]Check, 0, 16)}
+	return &work{joint: joint, trace: make([]Line, 0, linesOf(joint)), checks: make([]Check, 0, 16)}
+}
+
+// linesOf estimates how many lines the trace of a joint has, so that it grows once.
+func linesOf(j Joint) int {
+	lines := 192
+	if len(j.Group) > 0 {
+		lines += 96
+	}
+	if j.Eccentric != nil {
+		lines += 24
+	}
+	if j.Temperature != nil {
+		lines += len(j.Temperature.States) * (len(j.Parts) + 10)
+	}
+	return lines + 5*len(j.Loads.Spectrum)
 }
 
 // plan gathers the record.
@@ -160,12 +175,16 @@ func (w *work) given() (Torque, Angle) {
 
 // diagram gathers the points the joint diagram is drawn from.
 func (w *work) diagram() stiffness.Diagram {
-	return stiffness.Diagram{
+	d := stiffness.Diagram{
 		BoltCompliance:    w.boltCompliance,
 		ClampedCompliance: w.clampedCompliance,
 		Preload:           quantity.Range{Low: w.lowest, High: w.highest},
+		Embedding:         w.embedding,
+		Closing:           w.closing,
 		Loss:              w.lowest - w.lowestClamp - w.relief,
+		Gain:              w.thermalGain,
 		Axial:             quantity.Range{Low: w.axial.low, High: w.axial.high},
+		ClampAxial:        w.axial.clamp,
 		LoadFactor:        w.loadFactor,
 		BoltShare:         w.boltShare,
 		ClampShare:        w.relief,
@@ -173,6 +192,14 @@ func (w *work) diagram() stiffness.Diagram {
 		RequiredResidual:  w.residualClamp,
 		Limit:             w.tolerated,
 	}
+	if w.joint.Loads.cyclic() {
+		d.Swinging = quantity.Range{Low: w.axial.swingLo, High: w.axial.swingHi}
+	}
+	if e := w.joint.Eccentric; e != nil {
+		d.Eccentric, d.ClampedCompliance = true, w.eccentricClamping
+		d.Moment = quantity.Range{Low: w.momentFactor * e.MomentLow, High: w.momentFactor * e.MomentHigh}
+	}
+	return d
 }
 
 // angleRange is the window of the angle setting, where the angle is set.

@@ -1,6 +1,11 @@
 package planner
 
-import "math"
+import (
+	"math"
+	"strings"
+
+	"clampback/planner/fastener"
+)
 
 // Stripping of a tapped thread after Alexander's model, as VDI 2230-1:2015 R11
 // uses it, at the least material that thread tolerance 6H/6g allows. The
@@ -8,18 +13,22 @@ import "math"
 
 // threadLimits is the thread at least material, mm.
 type threadLimits struct {
-	boltMajorMin  float64 // d min, 6g
-	boltPitchMin  float64 // d_2 min, 6g
-	nutPitchMax   float64 // D_2 max, 6H
-	nutMinorMax   float64 // D_1 max, 6H
-	majorDiameter float64 // d, nominal
-	pitch         float64
+	boltMajorMin float64 // d min, 6g
+	boltPitchMin float64 // d_2 min, 6g
+	nutPitchMax  float64 // D_2 max, 6H
+	nutMinorMax  float64 // D_1 max, 6H
+	pitch        float64
 }
 
 // limitsOf computes the limits of size from the formulas of ISO 965-1
 // (fundamental deviation g, tolerance grade 6), before the standard rounds
-// them to preferred numbers: within 9 um of the printed limits to M24.
-func limitsOf(diameter, pitch, pitchDiameter, nutMinorDiameter float64) threadLimits {
+// them to preferred numbers: within 9 um of the printed limits to M24. Inch threads
+// have those of ASME B1.1, classes 2A and 2B.
+func limitsOf(thread fastener.Thread) threadLimits {
+	if thread.Inch {
+		return inchLimits(thread)
+	}
+	diameter, pitch := thread.Diameter, thread.Pitch
 	deviation := (15 + 11*pitch) / 1000                                     // es of g
 	major := (180*math.Cbrt(pitch*pitch) - 3.15/math.Sqrt(pitch)) / 1000    // Td(6)
 	boltPitch := 90 * math.Pow(pitch, 0.4) * math.Pow(diameter, 0.1) / 1000 // Td2(6)
@@ -28,12 +37,38 @@ func limitsOf(diameter, pitch, pitchDiameter, nutMinorDiameter float64) threadLi
 		minor = (433*pitch - 190*math.Pow(pitch, 1.22)) / 1000 // TD1(6), P <= 0.8 mm
 	}
 	return threadLimits{
-		boltMajorMin:  diameter - deviation - major,
-		boltPitchMin:  pitchDiameter - deviation - boltPitch,
-		nutPitchMax:   pitchDiameter + 1.32*boltPitch, // TD2(6)
-		nutMinorMax:   nutMinorDiameter + minor,
-		majorDiameter: diameter,
-		pitch:         pitch,
+		boltMajorMin: diameter - deviation - major,
+		boltPitchMin: thread.PitchDiameter() - deviation - boltPitch,
+		nutPitchMax:  thread.PitchDiameter() + 1.32*boltPitch, // TD2(6)
+		nutMinorMax:  thread.NutMinorDiameter() + minor,
+		pitch:        pitch,
+	}
+}
+
+// inchLimits are the limits of classes 2A and 2B by the formulas of ASME B1.1 (from
+// memory), in inches inside: T_d2 = 0.0015 (d^1/3 + L_e^1/2) + 0.015 P^2/3 with an
+// engagement L_e of d, of 9 P in the 8-thread series; allowance 0.3 T_d2, T_d 0.06 P^2/3,
+// T_D2 1.3 T_d2. The minor diameter of the nut: 0.25 P - 0.4 P^2 from 1/4 in, and
+// 0.05 P^2/3 + 0.03 P/d - 0.002 below.
+func inchLimits(thread fastener.Thread) threadLimits {
+	const inch = 25.4
+	d, p := thread.Diameter/inch, thread.Pitch/inch
+	engaged := d
+	if strings.HasSuffix(thread.Designation, "-8 UN") {
+		engaged = 9 * p
+	}
+	boltPitch := 0.0015*(math.Cbrt(d)+math.Sqrt(engaged)) + 0.015*math.Cbrt(p*p)
+	allowance := 0.3 * boltPitch
+	minor := 0.25*p - 0.4*p*p
+	if d < 0.25 {
+		minor = 0.05*math.Cbrt(p*p) + 0.03*p/d - 0.002
+	}
+	return threadLimits{
+		boltMajorMin: thread.Diameter - inch*(allowance+0.06*math.Cbrt(p*p)),
+		boltPitchMin: thread.PitchDiameter() - inch*(allowance+boltPitch),
+		nutPitchMax:  thread.PitchDiameter() + inch*1.3*boltPitch,
+		nutMinorMax:  thread.NutMinorDiameter() + inch*minor,
+		pitch:        thread.Pitch,
 	}
 }
 
@@ -153,17 +188,39 @@ func (w *work) stripping() {
 // least material.
 func (w *work) shearAreas() (tapped, bolt float64) {
 	t := w.thread
-	l := limitsOf(t.diameter, t.pitch, t.pitchDiameter, w.joint.Bolt.Thread.NutMinorDiameter())
-	const iso965 = "ISO 965-1, 6H/6g (formulas from memory)"
-	w.line("d_6g", "least thread diameter of the bolt", l.boltMajorMin, "mm", iso965)
-	w.line("d_2_6g", "least pitch diameter of the bolt", l.boltPitchMin, "mm", iso965)
-	w.line("D_2_6H", "largest pitch diameter of the internal thread", l.nutPitchMax, "mm", iso965)
-	w.lineBy(minorRule(t.pitch), "D_1_6H", "largest minor diameter of the internal thread", l.nutMinorMax, "mm", iso965)
+	l := limitsOf(w.joint.Bolt.Thread)
+	source, inch := "ISO 965-1, 6H/6g (formulas from memory)", ""
+	minor := minorRule(t.pitch)
+	if w.joint.Bolt.Thread.Inch {
+		source, inch = "ASME B1.1, 2A/2B (formulas from memory)", ".inch"
+		minor = w.inchEngagement()
+	}
+	w.lineBy("d_6g"+inch, "d_6g", "least thread diameter of the bolt", l.boltMajorMin, "mm", source)
+	w.lineBy("d_2_6g"+inch, "d_2_6g", "least pitch diameter of the bolt", l.boltPitchMin, "mm", source)
+	w.lineBy("D_2_6H"+inch, "D_2_6H", "largest pitch diameter of the internal thread", l.nutPitchMax, "mm", source)
+	w.lineBy(minor, "D_1_6H", "largest minor diameter of the internal thread", l.nutMinorMax, "mm", source)
 	tapped = w.line("A_SGM", "shear area of the internal thread over length",
 		tappedThreadArea(l.boltMajorMin, l.nutPitchMax, l.pitch), "mm", guideline+"R11")
 	bolt = w.line("A_SGS", "shear area of the bolt thread over length",
 		boltThreadArea(l.boltPitchMin, l.nutMinorMax, l.pitch), "mm", guideline+"R11")
 	return tapped, bolt
+}
+
+// inchEngagement puts down the length of engagement that inch tolerances go by, and
+// returns the rule of the minor diameter.
+func (w *work) inchEngagement() string {
+	t := w.joint.Bolt.Thread
+	engaged := t.Diameter
+	if strings.HasSuffix(t.Designation, "-8 UN") {
+		engaged = 9 * t.Pitch
+	}
+	w.input("L_e", "length of engagement that the tolerances go by", engaged, "mm", asme)
+	w.line("T_d2", "tolerance of the pitch diameter, 2A", 25.4*(0.0015*(math.Cbrt(t.Diameter/25.4)+math.Sqrt(engaged/25.4))+
+		0.015*math.Pow(t.Pitch/25.4, 2.0/3)), "mm", asme)
+	if t.Diameter < 6.35 {
+		return "D_1_6H.inch.small"
+	}
+	return "D_1_6H.inch"
 }
 
 // shearRatio puts down tau_B/R_m of the bolt, once.

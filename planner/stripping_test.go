@@ -22,7 +22,7 @@ func TestThreadShearAreaHandbook(t *testing.T) {
 		external, _ := published.Number(t, row, "external_min_mm")
 		internal, _ := published.Number(t, row, "internal_max_mm")
 		area, half := published.Number(t, row, "area_mm2")
-		l := limitsOf(th.Diameter, th.Pitch, th.PitchDiameter(), th.NutMinorDiameter())
+		l := limitsOf(th)
 		printed := tappedThreadArea(external, internal, th.Pitch)
 		ours := tappedThreadArea(l.boltMajorMin, l.nutPitchMax, th.Pitch)
 		if row["which"] == "bolt" {
@@ -31,6 +31,28 @@ func TestThreadShearAreaHandbook(t *testing.T) {
 		}
 		assert.InDelta(t, area, printed*th.Diameter, 2*half, "%s with printed limits", row["id"])
 		assert.InEpsilon(t, area, ours*th.Diameter, 0.015, "%s with computed limits", row["id"])
+	}
+}
+
+// Limits of size that ASME B1.1 prints, in (from memory): classes 2A and 2B.
+func TestInchLimitsASMEB11(t *testing.T) {
+	for _, c := range []struct {
+		thread                                 string
+		major, pitch, pitchInside, minorInside float64
+	}{
+		{"1/2-13 UNC", 0.4876, 0.4435, 0.4565, 0.434},
+		{"1/4-20 UNC", 0.2408, 0.2127, 0.2224, 0.207},
+		{"3/4-10 UNC", 0.7353, 0.6773, 0.6927, 0.663},
+		{"1-8 UNC", 0.9830, 0.9100, 0.9276, 0.890},
+		{"1/2-20 UNF", 0.4906, 0.4619, 0.4731, 0.457},
+	} {
+		th, err := fastener.ParseThread(c.thread)
+		require.NoError(t, err)
+		l := limitsOf(th)
+		assert.InDelta(t, c.major, l.boltMajorMin/25.4, 2e-4, c.thread)
+		assert.InDelta(t, c.pitch, l.boltPitchMin/25.4, 2e-4, c.thread)
+		assert.InDelta(t, c.pitchInside, l.nutPitchMax/25.4, 2e-4, c.thread)
+		assert.InDelta(t, c.minorInside, l.nutMinorMax/25.4, 1e-3, c.thread)
 	}
 }
 
@@ -64,7 +86,7 @@ func TestEngagementAgainstTrials(t *testing.T) {
 			assert.NoError(t, err)
 			class, err := fastener.FindClass(c.class, th)
 			assert.NoError(t, err)
-			l := limitsOf(th.Diameter, th.Pitch, th.PitchDiameter(), th.NutMinorDiameter())
+			l := limitsOf(th)
 			tapped := tappedThreadArea(l.boltMajorMin, l.nutPitchMax, th.Pitch) * c.tensile * c.ratio
 			bolt := boltThreadArea(l.boltPitchMin, l.nutMinorMax, th.Pitch) * class.ShearRatio * class.TensileStrength
 			ratio := tapped / bolt

@@ -8,6 +8,7 @@ const (
 	guideline  = "VDI 2230-1:2015 "
 	iso724     = "ISO 724"
 	iso898     = "ISO 898-1"
+	asme       = "ASME B1.1"
 	arithmetic = "arithmetic"
 )
 

@@ -12,9 +12,7 @@ import (
 func (v *validator) spectrum(l Loads) {
 	v.require(len(l.Spectrum) == 0 || l.Cycles == 0, at("loads.spectrum", "loads.cycles"), "keep one of them",
 		"both cycles and a spectrum are stated")
-	const most = 1000
-	v.require(len(l.Spectrum) <= most, at("loads.spectrum"), fmt.Sprintf("state at most %d blocks", most),
-		"the spectrum has %d blocks", len(l.Spectrum))
+	v.require(len(l.Spectrum) <= 1000, at("loads.spectrum"), "state at most 1000 blocks", "the spectrum has %d blocks", len(l.Spectrum))
 	for i, b := range l.Spectrum {
 		inside := b.Low <= b.High && b.Low >= l.Axial.Low && b.High <= l.Axial.High
 		v.require(inside, itemOf("loads.spectrum", i, "axial", "loads.axial"), "state a range within loads.axial, low end first",
@@ -59,8 +57,9 @@ func (v *validator) group(j Joint) {
 		"an eccentric joint is planned from the loads of one bolt, not of a group")
 	for _, s := range j.Group {
 		sound := s.Bolt >= 1 && s.Bolt <= j.Count && math.Abs(s.Axial) <= forces.most && math.Abs(s.X) <= forces.most && math.Abs(s.Y) <= forces.most
-		if !v.require(sound, at("group", "count"), fmt.Sprintf("state forces for bolts 1 to %d", j.Count),
-			"bolt %d in load case %q has no possible force", s.Bolt, s.Case) {
+		if !sound {
+			v.require(false, at("group", "count"), fmt.Sprintf("state forces for bolts 1 to %d", j.Count),
+				"bolt %d in load case %q has no possible force", s.Bolt, s.Case)
 			return
 		}
 	}

@@ -7,7 +7,10 @@ import (
 
 func (v *validator) safety(s Safety) {
 	factor := func(value float64, field string) {
-		v.require(value == 0 || (value >= 1 && value <= 100), at("safety."+field),
+		if value == 0 {
+			return
+		}
+		v.require(value >= 1 && value <= 100, at("safety."+field),
 			"state a factor of 1 or more, for example 1.2, or leave it out", "the safety factor is %g", value)
 	}
 	factor(s.Slip, "slip")
@@ -83,10 +86,10 @@ func (v *validator) washerHeat(l layer, part int, highest float64) {
 
 func (v *validator) boltHeat(j Joint, highest float64) {
 	_, _, known := j.boltSoftness(highest)
-	v.require(known, at("temperature", "bolt.property_class"), "state bolt: {hot_modulus: ...}, the modulus at the bolt's highest temperature",
+	v.require(known, at("temperature", "bolt.property_class", "bolt.thread"), "state bolt: {hot_modulus: ...}, the modulus at the bolt's highest temperature",
 		"%g degC lies beyond the data for the modulus of class %s", highest, j.Bolt.Class.Name)
 	_, _, known = j.hotYield(highest)
-	v.require(known, at("temperature", "bolt.property_class"),
+	v.require(known, at("temperature", "bolt.property_class", "bolt.thread"),
 		"state bolt: {hot_yield: ...}, the yield strength at the bolt's highest temperature",
 		"%g degC lies beyond the data for the yield strength of class %s", highest, j.Bolt.Class.Name)
 }

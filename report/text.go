@@ -96,7 +96,7 @@ func Bolt(j planner.Joint) string {
 	if j.HeadNut == nil {
 		head += " " + b.Head.Standard
 	}
-	text := fmt.Sprintf("%s x %g %s, class %s", b.Thread.Designation, b.Length, head, b.Class.Name)
+	text := fmt.Sprintf("%s x %s %s, class %s", b.Thread.Designation, quantity.Trim(b.Length), head, b.Class.Name)
 	if waist := b.Waist(); waist > 0 {
 		text += fmt.Sprintf(", reduced shank %g mm", waist)
 	}

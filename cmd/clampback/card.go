@@ -59,7 +59,7 @@ what is not OK and what to do then. An infeasible joint gets no card.`,
 	c.Flags().StringVar(&f.out, "out", "", "folder for one PDF a joint")
 	c.Flags().StringVar(&f.together, "together", "", "one PDF for all joints, with bookmarks")
 	c.Flags().StringVar(&f.paper, "paper", "A5", "A4, A5 or letter")
-	c.Flags().BoolVar(&f.withDiagram, "with-diagram", false, "add a calculation page with the joint diagram")
+	c.Flags().BoolVar(&f.withDiagram, "with-diagram", false, "add calculation pages with the joint diagram and, of a cyclic load, the fatigue diagrams")
 	c.Flags().BoolVar(&f.showInfeasible, "show-infeasible", false,
 		"write a page that forbids tightening for an infeasible joint")
 	return c

@@ -40,12 +40,31 @@ func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
 	var none T
 	sizes, known := c.sizes[kind]
 	if !known {
-		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kinds}
+		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
 	}
-	names := make([]string, len(sizes))
-	for i, d := range sizes {
-		names[i] = nominal(d)
+	var names []string
+	for _, d := range sizes {
+		if isInchSize(d) == t.Inch {
+			names = append(names, nominal(d))
+		}
+	}
+	if len(names) == 0 {
+		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
 	}
 	return none, fmt.Errorf("no %s %q of size %s: the table has %s", c.what, kind, nominal(t.Diameter),
 		strings.Join(names, ", "))
+}
+
+// kindsAt lists the designations that threads of that system have.
+func (c *catalogue[T]) kindsAt(t Thread) []string {
+	var kinds []string
+	for _, kind := range c.kinds {
+		for _, d := range c.sizes[kind] {
+			if isInchSize(d) == t.Inch {
+				kinds = append(kinds, kind)
+				break
+			}
+		}
+	}
+	return kinds
 }

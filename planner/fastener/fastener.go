@@ -95,20 +95,43 @@ type Material struct {
 	Own bool // of a user's own library
 }
 
-// NutClass returns the least nut class that belongs to the bolt's, ISO 898-2: its
-// figure before the dot; of a user's own class, that of the standard bolts which are
-// at least as strong, "" where there are none.
+// NutClass returns the least nut class that belongs to the bolt's: its figure before
+// the dot, ISO 898-2; the same class of stainless steel, ISO 3506-2; the same grade,
+// SAE J995; what ASTM A193 and A320 recommend. Of a user's own class, that of the
+// bolts of ISO 898-1 which are at least as strong, "" where there are none. From memory
+// but for ISO 898-2.
 func (c PropertyClass) NutClass() string {
 	if c.Own {
-		for _, n := range nutClasses {
-			if c.TensileStrength <= n.tensileStrength {
-				return n.name
-			}
-		}
-		return ""
+		return nutClassOf(c.TensileStrength)
+	}
+	switch {
+	case strings.HasPrefix(c.Name, "A2-"), strings.HasPrefix(c.Name, "A4-"), strings.HasPrefix(c.Name, "SAE"):
+		return c.Name
+	case strings.Contains(c.Name, "B8M"):
+		return "ASTM A194 8M"
+	case strings.Contains(c.Name, "B8"):
+		return "ASTM A194 8"
+	case strings.Contains(c.Name, "B7M"), strings.Contains(c.Name, "L7M"):
+		return "ASTM A194 2HM"
+	case strings.HasPrefix(c.Name, "A193"):
+		return "ASTM A194 2H"
+	case strings.HasPrefix(c.Name, "A320"):
+		return "ASTM A194 7"
+	case c.Name == "A574":
+		return "SAE grade 8"
 	}
 	class, _, _ := strings.Cut(c.Name, ".")
 	return class
+}
+
+// nutClassOf returns the least nut class for bolts of that R_m, MPa.
+func nutClassOf(tensileStrength float64) string {
+	for _, n := range nutClasses {
+		if tensileStrength <= n.tensileStrength {
+			return n.name
+		}
+	}
+	return ""
 }
 
 // nutClasses are the nut classes with the greatest R_m min, MPa, of the bolts of

@@ -7,9 +7,10 @@ import (
 	"clampback/planner/table"
 )
 
-// FindClass returns the strength of a property class of ISO 898-1 at the size
-// of t; 8.8 has two bands of size, 9.8 ends at 16 mm. Beyond M39 the standard
-// does not apply and the record's source says so.
+// FindClass returns the strength of a property class or grade at the size of t: of ISO
+// 898-1 (8.8 has two bands of size, 9.8 ends at 16 mm; beyond M39 the standard does not
+// apply and the record's source says so), ISO 3506-1, SAE J429, ASTM A193, A320, A574.
+// Metric classes go with metric threads, SAE grades and A574 with inch threads.
 func FindClass(name string, t Thread) (PropertyClass, error) {
 	return classes().find(name, t)
 }
@@ -45,7 +46,8 @@ var classes = sync.OnceValue(func() *catalogue[PropertyClass] {
 		}
 		over, upTo := r.Number("over_mm"), r.Number("up_to_mm")
 		for _, d := range diameters {
-			if over < d && d <= upTo {
+			system := r.Text("threads")
+			if over < d && d <= upTo && (system == "both" || (system == "inch") == isInchSize(d)) {
 				c.add(class.Name, d, class)
 			}
 		}
@@ -57,8 +59,8 @@ var classes = sync.OnceValue(func() *catalogue[PropertyClass] {
 func nominalDiameters() []float64 {
 	var all []float64
 	for _, name := range threads().names {
-		if t := threads().byName[name]; t.Coarse {
-			all = append(all, t.Diameter)
+		if d := threads().byName[name].Diameter; !slices.Contains(all, d) {
+			all = append(all, d)
 		}
 	}
 	return all

@@ -47,6 +47,10 @@ func MediumHole(t Thread) (float64, error) {
 // reaches or exceeds the length.
 func ReferenceThreadLength(head Head, t Thread, length float64) float64 {
 	switch {
+	case t.Inch && length <= 6*mmPerInch:
+		return 2*t.Diameter + mmPerInch/4 // ASME B18.2.1, from memory
+	case t.Inch:
+		return 2*t.Diameter + mmPerInch/2
 	case head.Kind == "socket cap":
 		return 2*t.Diameter + 12
 	case length <= 125:
@@ -83,6 +87,17 @@ var heads = sync.OnceValue(func() *catalogue[byPitch[Head]] {
 		fine.Standard = r.Text("standard_fine")
 		c.add(coarse.Kind, r.Number("d_mm"), byPitch[Head]{coarse, fine})
 	}
+	for _, r := range table.Read(tables, "inch_heads.csv") {
+		h := Head{
+			Kind:             r.Text("kind"),
+			Standard:         r.Text("standard"),
+			BearingDiameter:  r.Number("bearing_diameter_in") * mmPerInch,
+			Height:           r.Number("height_in") * mmPerInch,
+			WidthAcrossFlats: r.Number("width_across_flats_in") * mmPerInch,
+			Source:           r.Text("standard") + " (from memory)",
+		}
+		c.add(h.Kind, r.Number("d_in")*mmPerInch, byPitch[Head]{h, h})
+	}
 	return c
 })
 
@@ -100,6 +115,17 @@ var nuts = sync.OnceValue(func() *catalogue[byPitch[Nut]] {
 		fine := coarse
 		fine.Standard = r.Text("standard_fine")
 		c.add(coarse.Kind, r.Number("d_mm"), byPitch[Nut]{coarse, fine})
+	}
+	for _, r := range table.Read(tables, "inch_nuts.csv") {
+		n := Nut{
+			Kind:             r.Text("kind"),
+			Standard:         r.Text("standard"),
+			BearingDiameter:  r.Number("bearing_diameter_in") * mmPerInch,
+			Height:           r.Number("least_height_in") * mmPerInch,
+			WidthAcrossFlats: r.Number("width_across_flats_in") * mmPerInch,
+			Source:           r.Text("standard") + " (from memory)",
+		}
+		c.add(n.Kind, r.Number("d_in")*mmPerInch, byPitch[Nut]{n, n})
 	}
 	return c
 })
@@ -125,6 +151,19 @@ var washers = sync.OnceValue(func() *catalogue[Washer] {
 				Source:           fmt.Sprintf("%s; p_G %s", source(r), source(grade)),
 			})
 		}
+	}
+	for _, r := range table.Read(tables, "inch_washers.csv") {
+		c.add("ASTM F436", r.Number("d_in")*mmPerInch, Washer{
+			Standard:         "ASTM F436",
+			InnerDiameter:    r.Number("inner_diameter_in") * mmPerInch,
+			OuterDiameter:    r.Number("outer_diameter_in") * mmPerInch,
+			Thickness:        r.Number("thickness_in") * mmPerInch,
+			HardnessHV:       r.Number("hardness_HV"),
+			LimitingPressure: r.Number("limiting_pressure_MPa"),
+			Modulus:          205000,
+			Expansion:        11.5e-6,
+			Source:           "ASTM F436 (from memory); p_G that of ISO 7089 300 HV, a softer steel",
+		})
 	}
 	return c
 })

@@ -73,7 +73,7 @@ func TestHeadsAsPrinted(t *testing.T) {
 // ISO 4759-1 derives the bearing diameter from the width across flats; printed
 // to 0.01 mm. Product grade A up to M24, B above, as the guideline's tables.
 func TestHexagonBearingISO4759(t *testing.T) {
-	for _, d := range heads().sizes["hexagon"] {
+	for _, d := range metricSizes(heads().sizes["hexagon"]) {
 		head, err := FindHead("hexagon", parse(t, nominal(d)))
 		require.NoError(t, err)
 		grade := "A"
@@ -130,7 +130,7 @@ func TestNutHeightISO4759(t *testing.T) {
 // Flange nuts of EN 1661 are as high as the thread's diameter and share the
 // bearing face of the flange bolts of EN 1665 (from memory).
 func TestFlangeNuts(t *testing.T) {
-	for _, d := range nuts().sizes["hexagon flange"] {
+	for _, d := range metricSizes(nuts().sizes["hexagon flange"]) {
 		thread := parse(t, nominal(d))
 		nut, err := FindNut("hexagon flange", thread)
 		require.NoError(t, err)
@@ -148,7 +148,7 @@ func TestSocketCapHeads(t *testing.T) {
 	keys := []float64{2, 2.5, 3, 4, 5, 6, 8, 10, 12, 14, 17, 19, 22, 27, 32, 36, 41, 46}
 	headDiameters := map[float64]float64{3: 5.5, 4: 7, 5: 8.5, 6: 10, 8: 13, 10: 16}
 	last := 0.0
-	for _, d := range heads().sizes["socket cap"] {
+	for _, d := range metricSizes(heads().sizes["socket cap"]) {
 		headDiameter, small := headDiameters[d]
 		if !small {
 			headDiameter = 1.5 * d
@@ -168,7 +168,7 @@ func TestSocketCapHeads(t *testing.T) {
 // printed to 0.1 mm (M42 and M48 rounded twice: 69.445, 69.45, 69.5), grade A
 // up to M16. M14 is printed as 0.95 s min.
 func TestHexagonNutBearingISO4759(t *testing.T) {
-	for _, d := range nuts().sizes["hexagon"] {
+	for _, d := range metricSizes(nuts().sizes["hexagon"]) {
 		nut, err := FindNut("hexagon", parse(t, nominal(d)))
 		require.NoError(t, err)
 		s, grade := nut.WidthAcrossFlats, "A"
@@ -212,7 +212,7 @@ func TestTablesRestOnLookups(t *testing.T) {
 // hexagon lies inside its flats, that of a flange outside.
 func TestPartsFitTheirThread(t *testing.T) {
 	for _, kind := range heads().kinds {
-		for _, d := range heads().sizes[kind] {
+		for _, d := range metricSizes(heads().sizes[kind]) {
 			thread := parse(t, nominal(d))
 			head, err := FindHead(kind, thread)
 			require.NoError(t, err)
@@ -221,7 +221,7 @@ func TestPartsFitTheirThread(t *testing.T) {
 		}
 	}
 	for _, kind := range nuts().kinds {
-		for _, d := range nuts().sizes[kind] {
+		for _, d := range metricSizes(nuts().sizes[kind]) {
 			thread := parse(t, nominal(d))
 			nut, err := FindNut(kind, thread)
 			require.NoError(t, err)

@@ -3,7 +3,6 @@ package register
 import (
 	"errors"
 	"slices"
-	"strings"
 
 	"clampback/planner"
 	"clampback/planner/fastener"
@@ -67,23 +66,11 @@ func (d *decoder) joint(n *node) planner.Joint {
 	return j
 }
 
-// isInchThread reports whether a designation is one of a unified thread: "1/2-13
-// UNC", "#8-32", "3/4-16".
-func isInchThread(designation string) bool {
-	size, rest, found := strings.Cut(designation, "-")
-	return strings.Contains(designation, "UN") ||
-		(found && rest != "" && strings.Trim(size, "#0123456789/ ") == "" && size != "")
-}
-
 func readBolt(f field) planner.Bolt {
 	o := f.object("thread", "length", "head", "property_class", "shank", "segments", "rolled", "hot_modulus", "hot_yield")
 	var b planner.Bolt
-	switch {
-	case !o.require("thread", "M12"):
-	case !f.d.library.threads.has(o.word("thread")) && isInchThread(o.word("thread")):
-		o.at("thread").wrong("inch threads are not planned by this version", "state an ISO metric thread, for example M12")
-	default:
-		b.Thread = lookUp(o.at("thread"), f.d.library.findThread)
+	if o.require("thread", "M12") {
+		b.Thread = lookUp(o.at("thread"), o.d.library.findThread)
 	}
 	if o.require("length", "60 mm") {
 		b.Length = o.at("length").quantity(quantity.Length)

@@ -169,7 +169,7 @@ func TestAnyMistakeOfALibraryAloneIsOneProblem(t *testing.T) {
 		}
 		for name, text := range spoilt {
 			joints, problems := readBeside(ownParts, map[string]string{"plant-library.yaml": strings.Join(text, "")})
-			optional := key == "angle" || key == "hardness" || key == "bearing_pressure" || key == "shear_strength" || key == "tensile_strength"
+			optional := key == "angle" || key == "hardness" || key == "bearing_pressure" || key == "shear_strength" || key == "shear_ratio" || key == "tensile_strength"
 			if name == "missing" && optional && joints != nil {
 				continue
 			}
@@ -260,13 +260,15 @@ func TestMistakesAboutLibraries(t *testing.T) {
 		{"misspelt", "librarx: own.yaml\n" + strings.Replace(good, "material: S355", "material: WM-40 spheroidal", 1), `1:1: unknown key "librarx" in the register`, `did you mean "library"?`},
 		{"too large", "library: huge.yaml\n" + good, "1:10: huge.yaml is larger than 1024 kB", "split it into several files"},
 		{"too many", "library: [" + strings.Repeat("own.yaml, ", 101) + "]\n" + good, "1:10: the register names 101 libraries", "name at most 100"},
+		{"thread of an unread library, in the heat", "library: none.yaml\n" + strings.Replace(good, "thread: M12", "thread: WT-12", 1) +
+			"    temperature: {assembly: 20 degC, service: 250 degC}\n", "1:10: library: plant/none.yaml: file does not exist", "check the name"},
 		{"near an own name", "library: own.yaml\n" + strings.Replace(good, "material: S355", "material: WM-40 spheroid", 1),
 			`15:34: unknown material "WM-40 spheroid"`, `did you mean "WM-40 spheroidal"?`},
 		{"known are own names first", "library: own.yaml\n" + strings.Replace(good, "head: hexagon", "head: pentagram star", 1), `12:46: unknown head "pentagram star"`, "known are twelve-point, hexagon"},
 		{"for another thread", "library: own.yaml\n" + strings.Replace(good, "head: hexagon", "head: twelve-point", 1),
 			`12:46: no head "twelve-point" for M12: your library has it for WT-12`, "choose another head or size"},
 		{"a class too weak for what is asked", "library: weak.yaml\n" + strings.Replace(good, "10.9}\n    nut: hexagon", "C}\n    tapped: {material: S355, depth: 40 mm}", 1),
-			`12:71: the shear strength of class C is not known`, "add shear_strength to its entry in your library"},
+			`12:71: the shear strength of class C is not known`, "add shear_ratio to its entry in your library"},
 	}
 	files := map[string]string{
 		own: library, "huge.yaml": strings.Repeat("#", 1<<20+1),

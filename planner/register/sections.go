@@ -9,10 +9,17 @@ import (
 	"clampback/planner/quantity"
 )
 
-// isKnown reports whether a table has a designation, be it of another size.
-func isKnown(err error) bool {
-	var unknown *fastener.UnknownError
-	return !errors.As(err, &unknown)
+// inTable returns whether a table has a designation, for whatever thread.
+func inTable[T any](find func(string, fastener.Thread) (T, error)) func(name string) bool {
+	return func(name string) bool {
+		for _, t := range []fastener.Thread{{}, {Inch: true}} {
+			var unknown *fastener.UnknownError
+			if _, err := find(name, t); !errors.As(err, &unknown) {
+				return true
+			}
+		}
+		return false
+	}
 }
 
 func (l *library) readThreads(file libraryFile) {
@@ -30,43 +37,31 @@ func (l *library) readThreads(file libraryFile) {
 func (l *library) readParts(file libraryFile) {
 	readSection(l, file, &l.heads, section[fastener.Head]{
 		key: "heads", one: "head", keys: []string{"bearing_diameter", "height", "width_across_flats"}, reserved: "stud", sized: true,
-		taken: func(name string) bool {
-			_, err := fastener.FindHead(name, fastener.Thread{})
-			return isKnown(err)
-		},
-		read: readOwnHead,
+		taken: inTable(fastener.FindHead),
+		read:  readOwnHead,
 	})
 	readSection(l, file, &l.nuts, section[fastener.Nut]{
 		key: "nuts", one: "nut", keys: []string{"bearing_diameter", "height", "width_across_flats"}, sized: true,
-		taken: func(name string) bool {
-			_, err := fastener.FindNut(name, fastener.Thread{})
-			return isKnown(err)
-		},
-		read: readOwnNut,
+		taken: inTable(fastener.FindNut),
+		read:  readOwnNut,
 	})
 	readSection(l, file, &l.washers, section[fastener.Washer]{
 		key: "washers", one: "washer", reserved: "none", sized: true,
-		keys: []string{"inner_diameter", "outer_diameter", "thickness", "hardness", "bearing_pressure", "modulus", "expansion"},
-		taken: func(name string) bool {
-			_, err := fastener.FindWasher(name, fastener.Thread{})
-			return isKnown(err)
-		},
-		read: readOwnWasher,
+		keys:  []string{"inner_diameter", "outer_diameter", "thickness", "hardness", "bearing_pressure", "modulus", "expansion"},
+		taken: inTable(fastener.FindWasher),
+		read:  readOwnWasher,
 	})
 	readSection(l, file, &l.classes, section[fastener.PropertyClass]{
-		key: "property_classes", one: "property class", keys: []string{"yield", "tensile", "shear_strength", "modulus", "expansion"},
-		taken: func(name string) bool {
-			_, err := fastener.FindClass(name, fastener.Thread{})
-			return isKnown(err)
-		},
-		read: readOwnClass,
+		key: "property_classes", one: "property class", keys: []string{"yield", "tensile", "shear_ratio", "modulus", "expansion"},
+		taken: inTable(fastener.FindClass),
+		read:  readOwnClass,
 	})
 	readSection(l, file, &l.materials, section[fastener.Material]{
 		key: "materials", one: "material",
 		keys: []string{"modulus", "bearing_pressure", "expansion", "shear_strength", "tensile_strength"},
 		taken: func(name string) bool {
 			_, err := fastener.FindMaterial(name)
-			return isKnown(err)
+			return err == nil
 		},
 		read: readOwnMaterial,
 	})
@@ -130,11 +125,9 @@ func readOwnClass(e entryOf) (fastener.PropertyClass, []planner.Fault) {
 		Name: e.name, Source: e.source, Own: true,
 		YieldStrength:   e.must("yield", quantity.Pressure, "940 MPa"),
 		TensileStrength: e.must("tensile", quantity.Pressure, "1040 MPa"),
+		ShearRatio:      e.some("shear_ratio", quantity.Ratio),
 		Modulus:         e.must("modulus", quantity.Pressure, "205 GPa"),
 		Expansion:       e.must("expansion", quantity.Expansion, "11.5 um/m/K"),
-	}
-	if shear := e.some("shear_strength", quantity.Pressure); c.TensileStrength > 0 {
-		c.ShearRatio = shear / c.TensileStrength
 	}
 	return c, planner.ClassFaults(c)
 }

@@ -5,12 +5,14 @@ import (
 
 	"clampback/planner"
 	"clampback/planner/quantity"
+	"clampback/planner/stiffness"
 	"clampback/report"
 	"clampback/report/figure"
 )
 
-// calculation returns the blocks of the engineer's page: the joint diagram, the
-// work-back, the window, the checks, what binds and the assumptions.
+// calculation returns the blocks of the engineer's page: the joint diagram, of a
+// cyclic load the fatigue diagrams, what binds, the work-back, the window, the checks
+// and the assumptions.
 func (d *document) calculation(p planner.Plan) []block {
 	say := d.words.say
 	title := d.paragraph(say("calc_title"), bold(d.body()))
@@ -19,14 +21,44 @@ func (d *document) calculation(p planner.Plan) []block {
 	if !p.Feasible {
 		blocks = append(blocks, d.paragraph(say("calc_infeasible"), bold(figure.Type{Size: d.mm(titleSize)})))
 	}
-	height := d.mm(58)
+	height := d.mm(70)
 	diagram := block{height: height, draw: func(y float64) {
 		figure.JointDiagram(d.canvas, p, figure.Box{X: d.left(), Y: y, Width: d.wide(), Height: height}, say)
 	}}
-	blocks = append(blocks, diagram, d.twoLists(p))
-	blocks = append(blocks, d.checkTable(p)...)
+	blocks = append(blocks, diagram)
+	if f, ok := planner.FatigueDiagram(p); ok {
+		blocks = append(blocks, d.fatigue(p, f))
+	}
 	blocks = append(blocks, d.flow(say("calc_binds"), plainItems(p.Binds), d.small())...)
+	blocks = append(blocks, d.twoLists(p))
+	blocks = append(blocks, d.checkTable(p)...)
 	return append(blocks, d.flow(say("calc_assumptions"), plainItems(p.Assumptions), d.small())...)
+}
+
+// fatigue sets the Haigh diagram beside the Smith diagram, with where they come from
+// below.
+func (d *document) fatigue(p planner.Plan, f stiffness.FatigueDiagram) block {
+	say := d.words.say
+	rolled := say("fatigue_before")
+	if f.RolledAfter {
+		rolled = say("fatigue_after")
+	}
+	key := "fatigue_caption"
+	if f.Spectrum {
+		key = "fatigue_caption_spectrum"
+	}
+	text := say(key, "rolled", rolled, "cycles", figure.Cycles(f.Cycles))
+	if p.ResidualClamp.Lowest < 0 {
+		text += " " + say("fatigue_opens")
+	}
+	caption := d.paragraph(text, d.small())
+	drawing, between := d.mm(61), d.mm(4)
+	width := (d.wide() - between) / 2
+	return block{height: drawing + caption.height, draw: func(y float64) {
+		figure.Haigh(d.canvas, f, figure.Box{X: d.left(), Y: y, Width: width, Height: drawing}, say)
+		figure.Smith(d.canvas, f, figure.Box{X: d.left() + width + between, Y: y, Width: width, Height: drawing}, say)
+		caption.draw(y + drawing)
+	}}
 }
 
 // twoLists sets the work-back beside the setting.
@@ -39,9 +71,19 @@ func (d *document) twoLists(p planner.Plan) block {
 		{"+ " + say("calc_relief"), kilo(quantity.RoundUp(b.LoadRelief, 10))},
 		{"+ " + say("calc_embedding"), kilo(quantity.RoundUp(b.EmbeddingLoss, 10))},
 		{"+ " + say("calc_thermal"), kilo(quantity.RoundUp(b.ThermalLoss, 10))},
+	}
+	for _, loss := range []struct {
+		key    string
+		newton float64
+	}{{"calc_closing", b.ClosingLoss}, {"calc_softening", b.SofteningLoss}, {"calc_relaxation", b.RelaxationLoss}} {
+		if loss.newton > 0 {
+			rows = append(rows, [2]string{"+ " + say(loss.key), kilo(quantity.RoundUp(loss.newton, 10))})
+		}
+	}
+	rows = append(rows, [][2]string{
 		{"= " + say("calc_required"), kilo(quantity.RoundUp(b.RequiredPreload, 10))},
 		{say("calc_limit"), kilo(quantity.RoundDown(p.Preload.Limit, 10))},
-	}
+	}...)
 	setting := d.newList(say("calc_setting"), plainItems(d.settingLines(p)), half, d.small())
 	line := d.mm(smallSize) * lineHeight
 	head := d.mm(smallSize) * headingHeight

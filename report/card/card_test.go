@@ -19,6 +19,7 @@ import (
 	"clampback/planner/pattern"
 	"clampback/planner/quantity"
 	"clampback/report/card"
+	"clampback/report/figure"
 	"clampback/report/internal/demo"
 	"clampback/templates"
 )
@@ -124,6 +125,62 @@ func TestInfeasibleJointGetsNoInstruction(t *testing.T) {
 	}
 	for _, text := range pages(t, write(t, p, card.Options{ShowInfeasible: true, WithDiagram: true}))[1:] {
 		assert.Contains(t, squeeze(text), "TRN-100")
+	}
+}
+
+// The calculation page of a cyclic joint shows both fatigue diagrams with their source
+// and the cycles below its joint diagram, on one page of any paper; that of a static
+// joint none.
+func TestCalculationPageShowsFatigue(t *testing.T) {
+	for _, paper := range []card.Paper{card.A5, card.A4, card.Letter} {
+		for _, p := range demo.Plans(t) {
+			o := card.Options{Paper: paper, ShowInfeasible: true}
+			without := len(pages(t, write(t, p, o)))
+			o.WithDiagram = true
+			all := pages(t, write(t, p, o))[without:]
+			assert.LessOrEqual(t, len(all), 3, "%s, %v", p.ID, paper)
+			figures := 0
+			for _, page := range all {
+				text := squeeze(page)
+				if !strings.Contains(text, "Haigh diagram") {
+					continue
+				}
+				figures++
+				assert.Contains(t, text, "Smith diagram", p.ID)
+				assert.Contains(t, text, "change of length", "%s: the joint diagram stands above", p.ID)
+				require.NotNil(t, p.Fatigue, p.ID)
+				assert.Contains(t, text, "Thread rolled "+p.Fatigue.Rolled, p.ID)
+				if p.Fatigue.Cycles > 0 {
+					assert.Contains(t, text, figure.Cycles(p.Fatigue.Cycles)+" cycles, at the highest preload", p.ID)
+				} else {
+					assert.Contains(t, text, "largest amplitude of the load spectrum and limit at 2e6 cycles", p.ID)
+				}
+				assert.Contains(t, text, "VDI 2230-1:2015 R9, from memory", p.ID)
+			}
+			want := 0
+			if p.Fatigue != nil {
+				want = 1
+			}
+			assert.Equal(t, want, figures, "%s, %v", p.ID, paper)
+		}
+	}
+}
+
+// Where the interface opens, the fatigue diagrams say that they show too little.
+func TestFatigueOfAnOpenJointIsNoPromise(t *testing.T) {
+	p := byID(t, "TRN-010")
+	require.NotContains(t, squeeze(strings.Join(pages(t, write(t, p, card.Options{WithDiagram: true})), " ")), "The interface opens")
+	p.ResidualClamp.Lowest = -1
+	require.Contains(t, squeeze(strings.Join(pages(t, write(t, p, card.Options{WithDiagram: true})), " ")), "The interface opens")
+}
+
+// The work-back on the page adds up: every loss has its line.
+func TestEveryLossHasItsLine(t *testing.T) {
+	p := byID(t, "TRN-010")
+	p.WorkBack.ClosingLoss, p.WorkBack.SofteningLoss, p.WorkBack.RelaxationLoss = 1230, 2340, 3450
+	text := squeeze(strings.Join(pages(t, write(t, p, card.Options{WithDiagram: true})), " "))
+	for _, want := range []string{"closing layers 1.23", "softer moduli 2.34", "relaxation 3.45"} {
+		assert.Contains(t, text, want)
 	}
 }
 

@@ -13,6 +13,14 @@ func (d *document) steps(p planner.Plan) []item {
 	say := d.words.say
 	snug, target := quantity.Trim(p.Angle.SnugTorque), quantity.Trim(p.Torque.Target)
 	items := []item{{text: say("step_read")}, {text: say("step_parts")}}
+	if heat := p.Joint.Temperature; len(heat.States) > 0 || heat.Service != heat.Assembly {
+		t := heat.Assembly
+		text := say("step_temperature_one", "low", quantity.Trim(t.Low))
+		if !t.IsSingle() {
+			text = say("step_temperature", "low", quantity.Trim(t.Low), "high", quantity.Trim(t.High))
+		}
+		items = append(items, item{text: text})
+	}
 	if p.Joint.Friction.State != "" {
 		items = append(items, item{text: say("step_lubricate")})
 	}

@@ -17,7 +17,7 @@ import (
 // calculation page.
 type Options struct {
 	Paper          Paper
-	WithDiagram    bool  // add a calculation page with the joint diagram
+	WithDiagram    bool  // add calculation pages with the joint diagram and, of a cyclic load, the fatigue diagrams
 	ShowInfeasible bool  // print a page that forbids tightening, instead of an error
 	Templates      fs.FS // a folder that overrides the built-in words file by file; nil: none
 }

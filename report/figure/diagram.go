@@ -1,10 +1,8 @@
 package figure
 
 import (
-	"cmp"
 	"fmt"
 	"math"
-	"slices"
 
 	"clampback/planner"
 	"clampback/planner/quantity"
@@ -14,17 +12,22 @@ import (
 // JointDiagram draws the joint diagram to scale into a box: force over change of
 // length, the bolt's line rising, the clamped parts' lines falling, the range of
 // preload as a band, and at the lowest preload after losses the operating force
-// with its two shares and the residual clamp it leaves. The words come from say,
-// by the keys of the cards' words that begin with diagram_.
+// with its two shares, the residual clamp it leaves and, of a cyclic force, the
+// swing of the bolt force. The largest bolt force stands at the highest preload.
+// The words come from say, by the keys of the cards' words that begin with
+// diagram_; an underscore in them begins a subscript.
 func JointDiagram(c Canvas, p planner.Plan, box Box, say Words) {
-	d := newDiagram(c, p.Diagram, box)
-	d.say = say
-	d.axes()
-	d.band()
-	d.limits()
-	d.lines()
-	d.load()
-	d.labels()
+	g := newDiagram(c, p.Diagram, box, say)
+	g.band()
+	g.frame(1000, 0.001, say("diagram_length"), say("diagram_force"))
+	g.limits()
+	g.springs()
+	g.losses(p.WorkBack.SofteningLoss+p.WorkBack.RelaxationLoss > 0)
+	g.tension()
+	g.compression()
+	g.swing()
+	g.largest()
+	notes(c, g.notes, g.column, g.size)
 }
 
 // Words returns the phrase of a key with its {names} filled from pairs of name
@@ -33,23 +36,11 @@ type Words func(key string, pairs ...string) string
 
 // diagram is a joint diagram while it is drawn.
 type diagram struct {
-	c     Canvas
-	say   Words
-	d     stiffness.Diagram
-	size  float64 // of the type of labels, mm
-	plot  Box     // the area of the axes
-	side  float64 // x where the labels begin
-	right float64 // x where they end
-	force float64 // top of the force axis, N
-	reach float64 // end of the length axis, mm
-	notes []note
-}
-
-// note is a label at the side with the height it belongs to.
-type note struct {
-	at   float64 // y on the page, mm
-	from float64 // x on the page where its leader begins, mm
-	text string
+	axes
+	say    Words
+	d      stiffness.Diagram
+	column Box // of the labels
+	notes  []note
 }
 
 // noteSize is the type of labels in a drawing of drawingWidth, mm; both grow
@@ -59,202 +50,274 @@ const (
 	drawingWidth = 132.0
 )
 
-// The strokes of the diagram.
-var (
-	thin   = Stroke{Width: 0.2}
-	medium = Stroke{Width: 0.35}
-	heavy  = Stroke{Width: 0.7}
+// Measures beside a state under load over the type size: two columns of dimensions,
+// then the wave of a cyclic force.
+const (
+	sharesColumn = 1.0
+	loadColumn   = 2.3
+	waveColumn   = 3.4
+	waveLength   = 4.0
 )
 
-func newDiagram(c Canvas, d stiffness.Diagram, box Box) *diagram {
+func newDiagram(c Canvas, d stiffness.Diagram, box Box, say Words) *diagram {
 	size := noteSize * box.Width / drawingWidth
-	left, below, above := 4.8*size, 4*size, 1.9*size
-	side := 0.41 * box.Width
+	left, above, below := 4.8*size, 1.9*size, 3.4*size
+	side := 0.43 * box.Width
 	g := &diagram{
-		c: c, d: d, size: size,
-		plot: Box{box.X + left, box.Y + above, box.Width - left - side - size, box.Height - above - below},
-		side: box.X + box.Width - side, right: box.X + box.Width,
+		axes: axes{
+			c: c, size: size, room: left,
+			plot: Box{box.X + left, box.Y + above, box.Width - left - side - 1.5*size, box.Height - above - below},
+		},
+		say: say, d: d,
+		column: Box{box.X + box.Width - side, box.Y, side, box.Height},
 	}
-	top := math.Max(d.Limit, math.Max(d.Preload.High, g.serviceForce()+d.BoltShare))
-	g.force = 1.08 * top
-	g.reach = 1.04 * math.Max(d.Preload.High, g.serviceForce()) * (d.BoltCompliance + d.ClampedCompliance)
+	top := math.Max(d.Limit, math.Max(d.RequiredResidual, d.Most()))
+	_, reach := d.Unloaded(math.Max(d.Most(), d.Preload.Low))
+	states := []stiffness.State{g.pulled(), d.Under(d.Least(), math.Min(0, d.Axial.Low)), d.Largest()}
+	tension, compression := states[0].Length, states[1].Length
+	if low, high, ok := d.Swing(); ok {
+		states = append(states, low, high)
+		tension = math.Max(tension, math.Max(low.Length, high.Length))
+	}
+	for _, s := range states {
+		top = math.Max(top, math.Max(s.Bolt, s.Clamp))
+		reach = math.Max(reach, s.Length)
+		compression = math.Min(compression, s.Length)
+	}
+	// A joint of nothing is drawn on empty axes.
+	const leastForce, leastLength = 1e-3, 1e-6 // N, mm
+	g.widen(math.Max(1.04*reach, leastLength), compression, tension)
+	g.high = math.Max(1.06*top, leastForce)
 	return g
 }
 
-// serviceForce is the lowest preload after losses, N: where the load acts.
-func (g *diagram) serviceForce() float64 { return g.d.Preload.Low - g.d.Loss }
-
-// at places a change of length (mm) and a force (N) on the page.
-func (g *diagram) at(length, force float64) Point {
-	return Point{g.plot.X + g.plot.Width*length/g.reach, g.plot.Y + g.plot.Height*(1-force/g.force)}
+// pulled is the lowest preload after losses under the load of the bolt whose clamp is
+// needed most.
+func (g *diagram) pulled() stiffness.State {
+	return g.d.With(g.d.Under(g.d.Least(), math.Max(0, g.d.ClampAxial)), math.Max(0, g.d.Moment.High))
 }
 
-func (g *diagram) line(x1, f1, x2, f2 float64, s Stroke) {
-	a, b := g.at(x1, f1), g.at(x2, f2)
-	g.c.Line(a.X, a.Y, b.X, b.Y, s)
-}
-
-// axes draws the axes with round numbers: force in kN, change of length in um.
-func (g *diagram) axes() {
-	g.line(0, 0, g.reach, 0, medium)
-	g.line(0, 0, 0, g.force, medium)
-	tick := Type{Size: g.size, Anchor: End}
-	for _, f := range roundSteps(g.force/1000, 5) {
-		p := g.at(0, f*1000)
-		g.c.Line(p.X-1, p.Y, p.X, p.Y, thin)
-		g.c.Text(p.X-1.5, p.Y+g.size*0.36, fmt.Sprintf("%g", f), tick)
+// widen sets the ends of the length axis: to hold zero and a reach, and beside the
+// states under compression and tension the columns of their dimensions.
+func (g *diagram) widen(reach, compression, tension float64) {
+	g.left, g.right = math.Min(0, compression), reach
+	before, behind := 0.0, 0.0 // shares of the width
+	if g.d.Axial.Low < 0 {
+		before = (loadColumn + 0.5) * g.size / g.plot.Width
 	}
-	for _, l := range roundSteps(g.reach*1000, 4) {
-		p := g.at(l/1000, 0)
-		g.c.Line(p.X, p.Y, p.X, p.Y+1, thin)
-		g.c.Text(p.X, p.Y+1.4+g.size, fmt.Sprintf("%g", l), Type{Size: g.size, Anchor: Middle})
+	if _, _, ok := g.d.Swing(); ok || g.d.ClampAxial > 0 {
+		behind = (waveColumn + waveLength) * g.size / g.plot.Width
 	}
-	g.c.Text(g.plot.X-1.5, g.plot.Y-1.5, g.say("diagram_force"), Type{Size: g.size, Anchor: Start})
-	g.c.Text(g.plot.X+g.plot.Width, g.plot.Y+g.plot.Height+3*g.size, g.say("diagram_length"),
-		Type{Size: g.size, Anchor: End})
-}
-
-// roundSteps returns multiples of a round step up to top, about n of them; none
-// for an axis without length.
-func roundSteps(top float64, n int) []float64 {
-	if top <= 0 || !finite(top) {
-		return nil
+	// Each end moves a little further when the other does: by far less each time.
+	for range 8 {
+		g.left = math.Min(g.left, (compression-before*g.right)/(1-before))
+		g.right = math.Max(g.right, (tension-behind*g.left)/(1-behind))
 	}
-	raw := top / float64(n)
-	power := math.Pow(10, math.Floor(math.Log10(raw)))
-	step := 10 * power
-	for _, m := range []float64{1, 2, 5} {
-		if m*power >= raw {
-			step = m * power
-			break
-		}
-	}
-	var steps []float64
-	for i := 0; float64(i)*step <= top; i++ {
-		steps = append(steps, math.Round(float64(i)*step*1e6)/1e6)
-	}
-	return steps
 }
 
 // band shades the range of preload that the setting gives.
 func (g *diagram) band() {
 	low, high := g.d.Preload.Low, g.d.Preload.High
-	a, b := g.at(0, low), g.at(g.reach, high)
+	a, b := g.at(g.left, math.Max(0, low)), g.at(g.right, math.Max(0, high))
 	g.c.Polygon([]Point{{a.X, a.Y}, {b.X, a.Y}, {b.X, b.Y}, {a.X, b.Y}}, 0.88, Stroke{})
-	g.note(g.reach, high, g.say("diagram_highest", "force", kilo(high, true)))
-	g.note(g.reach, low, g.say("diagram_lowest", "force", kilo(low, false)))
+	g.noteAt(g.right, high, false, "diagram_highest", "force", kilo(high, true))
+	g.noteAt(g.right, low, false, "diagram_lowest", "force", kilo(low, false))
 }
 
 // limits draws what the joint tolerates and what it must keep.
 func (g *diagram) limits() {
-	g.line(0, g.d.Limit, g.reach, g.d.Limit, Stroke{Width: 0.5, Dash: []float64{3, 1}})
-	g.note(g.reach, g.d.Limit, g.say("diagram_limit", "force", kilo(g.d.Limit, false)))
-	g.line(0, g.d.RequiredResidual, g.reach, g.d.RequiredResidual, Stroke{Width: 0.5, Dash: []float64{1, 1}})
-	g.note(g.reach, g.d.RequiredResidual, g.say("diagram_required", "force", kilo(g.d.RequiredResidual, true)))
+	g.line(g.left, g.d.Limit, g.right, g.d.Limit, dashed)
+	g.noteAt(g.right, g.d.Limit, false, "diagram_limit", "force", kilo(g.d.Limit, false))
+	g.line(g.left, g.d.RequiredResidual, g.right, g.d.RequiredResidual, level)
+	g.noteAt(g.right, g.d.RequiredResidual, false, "diagram_required", "force", kilo(g.d.RequiredResidual, true))
 }
 
-// lines draws bolt and clamped parts as springs: heavy from the lowest preload
-// after losses, thin from the highest.
-func (g *diagram) lines() {
-	bolt, parts := g.d.BoltCompliance, g.d.ClampedCompliance
-	high, low := g.d.Preload.High, g.serviceForce()
-	g.line(0, 0, high*bolt, high, heavy)
-	if g.d.BoltShare > 0 && low+g.d.BoltShare > high {
-		g.line(high*bolt, high, (low+g.d.BoltShare)*bolt, low+g.d.BoltShare, heavy)
+// springs draws bolt and clamped parts: heavy from the lowest preload after losses,
+// thin from the highest.
+func (g *diagram) springs() {
+	low, high := g.d.Least(), g.d.Preload.High
+	if high > 0 {
+		bolt, end := g.d.Unloaded(high)
+		g.line(0, 0, bolt, high, heavy)
+		g.line(bolt, high, end, 0, thin)
+		named := 0.16 * high
+		g.noteAt(named*g.d.BoltCompliance, named, true, "diagram_bolt", "compliance", compliance(g.d.BoltCompliance))
 	}
-	g.line(high*bolt, high, high*(bolt+parts), 0, thin)
 	if low <= 0 {
 		return // nothing is left to draw a triangle from
 	}
-	g.line(low*bolt, low, low*(bolt+parts), 0, heavy)
-	g.line(0, low, low*bolt, low, Stroke{Width: 0.2, Dash: []float64{0.6, 0.6}})
-	label := Type{Size: g.size, Bold: true}
-	b := g.at(0.45*high*bolt, 0.45*high)
-	name := g.say("diagram_bolt")
-	g.c.Text(b.X-1-g.c.Width(name, label), b.Y, name, label)
-	q := g.at(low*bolt+0.8*low*parts, 0.2*low)
-	name = g.say("diagram_parts")
-	g.c.Text(q.X-2-g.c.Width(name, label), q.Y, name, label)
-	if g.d.Loss > 0 {
-		g.note(low*bolt, low, g.say("diagram_losses", "loss", kilo(g.d.Loss, true), "force", kilo(low, false)))
+	bolt, end := g.d.Unloaded(low)
+	g.line(bolt, low, end, 0, heavy)
+	g.line(g.left, low, bolt, low, dotted)
+	named := 0.08 * low
+	parts := "diagram_parts"
+	if g.d.Eccentric {
+		parts = "diagram_parts_eccentric"
 	}
+	g.noteAt(end-named*g.d.ClampedCompliance, named, true, parts, "compliance", compliance(g.d.ClampedCompliance))
 }
 
-// load draws the operating force at the lowest preload after losses: its share
-// that the bolt carries above, the share that relieves the clamp below. For a
-// compressive force the shares change sides.
-func (g *diagram) load() {
-	low := g.serviceForce()
-	if low <= 0 {
+// losses draws what takes the lowest preload down to F_V: embedding, closing layers
+// and the rest, which is temperature alone unless something else is lost over time.
+func (g *diagram) losses(overTime bool) {
+	later := "diagram_loss_thermal"
+	if overTime {
+		later = "diagram_loss_time"
+	}
+	x := g.left + 0.06*(g.right-g.left)
+	from := g.d.Preload.Low
+	for _, loss := range []struct {
+		key   string
+		force float64
+	}{{"diagram_loss_embedding", g.d.Embedding}, {"diagram_loss_closing", g.d.Closing}, {later, g.d.LaterLoss()}} {
+		const nothing = 1e-6 // N: the rounding of sums
+		if loss.force <= nothing {
+			continue
+		}
+		to := math.Max(0, from-loss.force)
+		if from > 0 {
+			g.arrow(x, from, to, medium)
+		}
+		g.noteAt(x, (math.Max(0, from)+to)/2, true, loss.key, "force", kilo(loss.force, true))
+		from -= loss.force
+	}
+	key := "diagram_least"
+	if g.d.Least() <= 0 {
+		key = "diagram_least_none"
+	}
+	bolt, _ := g.d.Unloaded(math.Max(0, g.d.Least()))
+	g.noteAt(bolt, math.Max(0, g.d.Least()), true, key, "force", kilo(g.d.Least(), false))
+}
+
+// tension draws a tensile operating force at the lowest preload after losses: the
+// share that the bolt carries above, the share that relieves the clamp below.
+func (g *diagram) tension() {
+	load := g.d.ClampAxial
+	if load <= 0 {
+		g.noteAt(g.right, math.Max(0, g.d.ResidualClamp.Low), false, "diagram_clamp", "force", kilo(g.d.ResidualClamp.Low, false))
 		return
 	}
-	x := low * g.d.BoltCompliance
-	if g.d.Axial.High > 0 {
-		g.arrow(x, low, low+g.d.BoltShare)
-		left := math.Max(0, g.d.ResidualClamp.Low) // a gaping interface holds nothing
-		g.arrow(x, low, left)
-		g.note(x, low+g.d.BoltShare, g.say("diagram_bolt_load", "force", kilo(low+g.d.BoltShare, true),
-			"share", kilo(g.d.BoltShare, true)))
-		g.note(x, left, g.say("diagram_clamp_load", "force", kilo(g.d.ResidualClamp.Low, false),
-			"share", kilo(g.d.ClampShare, true)))
+	low, s := math.Max(0, g.d.Least()), g.pulled()
+	g.path(low, s)
+	boltKey, clampKey, clampShare := "diagram_bolt_load", "diagram_clamp_load", g.d.ClampShare
+	if s.Open {
+		boltKey, clampKey, clampShare = "diagram_bolt_open", "diagram_clamp_open", low
 	}
-	if g.d.Axial.Low < 0 {
-		compression := -g.d.Axial.Low
-		g.arrow(x, low, low+(1-g.d.LoadFactor)*compression)
-		g.arrow(x, low, low-g.d.LoadFactor*compression)
-		g.note(x, low+(1-g.d.LoadFactor)*compression,
-			g.say("diagram_clamp_compression", "force", kilo(low+(1-g.d.LoadFactor)*compression, true)))
-		g.note(x, low-g.d.LoadFactor*compression, g.say("diagram_bolt_compression",
-			"force", kilo(low-g.d.LoadFactor*compression, false)))
-	}
+	g.noteAt(s.Length, s.Bolt, true, boltKey, "force", kilo(s.Bolt, true), "share", kilo(s.Bolt-low, true))
+	g.noteAt(s.Length, s.Clamp, true, clampKey, "force", kilo(g.d.ResidualClamp.Low, false), "share", kilo(clampShare, true))
+	g.shares(low, s, load, g.size)
 }
 
-// arrow draws a vertical arrow from a force to another.
-func (g *diagram) arrow(x, from, to float64) {
-	a, b := g.at(x, from), g.at(x, to)
-	g.c.Line(a.X, a.Y, b.X, b.Y, Stroke{Width: 0.5})
-	head := math.Copysign(math.Min(1.6, math.Abs(b.Y-a.Y)), b.Y-a.Y)
-	g.c.Polygon([]Point{{b.X, b.Y}, {b.X - 0.8, b.Y - head}, {b.X + 0.8, b.Y - head}}, 0, Stroke{})
+// compression draws a compressive operating force: the bolt's share below, what the
+// clamp gains above.
+func (g *diagram) compression() {
+	load := g.d.Axial.Low
+	if load >= 0 {
+		return
+	}
+	low := math.Max(0, g.d.Least())
+	s := g.d.Under(low, load)
+	g.path(low, s)
+	key := "diagram_bolt_compression"
+	if s.Slack {
+		key = "diagram_bolt_slack"
+	}
+	g.noteAt(s.Length, s.Clamp, true, "diagram_clamp_compression", "force", kilo(s.Clamp, true))
+	g.noteAt(s.Length, s.Bolt, true, key, "force", kilo(s.Bolt, false), "share", kilo(low-s.Bolt, true))
+	g.shares(low, s, load, -g.size)
 }
 
-func (g *diagram) note(length, force float64, text string) {
-	p := g.at(length, force)
-	g.notes = append(g.notes, note{at: p.Y, from: p.X, text: text})
+// path draws the lines on which an operating force moves bolt and parts away from
+// the preload point.
+func (g *diagram) path(preload float64, s stiffness.State) {
+	bolt, _ := g.d.Unloaded(preload)
+	g.line(bolt, preload, s.Length, s.Bolt, thin)
+	if s.Open {
+		// The parts part where nothing presses on them any more.
+		end := g.d.Under(preload, preload/(1-g.d.LoadFactor))
+		g.line(bolt, preload, end.Length, 0, thin)
+		return
+	}
+	g.line(bolt, preload, s.Length, s.Clamp, thin)
 }
 
-// labels prints the notes at the side, moved apart where they would overlap,
-// each with a thin leader to its height.
-func (g *diagram) labels() {
-	slices.SortStableFunc(g.notes, func(a, b note) int { return cmp.Compare(a.at, b.at) })
-	spacing := g.size * 1.35
-	y := make([]float64, len(g.notes))
-	for i, n := range g.notes {
-		y[i] = n.at
-		if i > 0 {
-			y[i] = math.Max(y[i], y[i-1]+spacing)
-		}
+// shares draws the two shares of an operating force as arrows from the preload, and
+// the whole as a dimension, beside its state: a column is so wide, to the right or,
+// below 0, to the left.
+func (g *diagram) shares(preload float64, s stiffness.State, load, column float64) {
+	for _, force := range []float64{s.Bolt, s.Clamp} {
+		p := g.at(s.Length, force)
+		g.c.Line(p.X, p.Y, p.X+(loadColumn+0.3)*column, p.Y, thin)
+		from, to := g.at(s.Length, preload), p
+		from.X += sharesColumn * column
+		to.X = from.X
+		g.arrowOnPage(from, to, bold)
 	}
-	// What ran out below is pushed up again.
-	bottom := g.plot.Y + g.plot.Height
-	for i := len(y) - 1; i >= 0; i-- {
-		y[i] = math.Min(y[i], bottom)
-		bottom = y[i] - spacing
+	// The bolt may hold more than the load adds: what a working moment does.
+	g.line(s.Length, s.Clamp, s.Length, s.Clamp+load, dotted)
+	middle := g.span(s.Length, s.Clamp, s.Clamp+load, loadColumn*column)
+	g.notes = append(g.notes, note{middle, true, g.say("diagram_load", "force", signed(load))})
+}
+
+// swing draws the bolt force of a cyclic load as a wave between its two values.
+func (g *diagram) swing() {
+	low, high, ok := g.d.Swing()
+	if !ok {
+		return
 	}
-	for i, n := range g.notes {
-		g.c.Line(n.from, n.at, g.side-4, n.at, Stroke{Width: 0.12, Grey: 0.5})
-		g.c.Line(g.side-4, n.at, g.side-1, y[i], Stroke{Width: 0.12, Grey: 0.5})
-		size := g.size
-		if w := g.c.Width(n.text, Type{Size: size}); w > g.right-g.side {
-			size *= (g.right - g.side) / w
-		}
-		g.c.Text(g.side, y[i]+size*0.36, n.text, Type{Size: size})
+	const steps, waves = 72, 3
+	start := g.at(math.Max(high.Length, low.Length), 0).X + waveColumn*g.size
+	length := (waveLength - 0.4) * g.size
+	at := func(i int) Point {
+		angle := 2 * math.Pi * waves * float64(i) / steps
+		middle, amplitude := (low.Bolt+high.Bolt)/2, (high.Bolt-low.Bolt)/2
+		return Point{start + length*float64(i)/steps, g.at(0, middle+amplitude*math.Sin(angle)).Y}
 	}
+	for i := range steps {
+		p, q := at(i), at(i+1)
+		g.c.Line(p.X, p.Y, q.X, q.Y, medium)
+	}
+	g.notes = append(g.notes, note{at(steps), false,
+		g.say("diagram_swing", "low", kilo(low.Bolt, false), "high", kilo(high.Bolt, true))})
+}
+
+// largest draws the largest bolt force, at the highest preload with what temperature
+// adds.
+func (g *diagram) largest() {
+	most, s := g.d.Most(), g.d.Largest()
+	if most <= 0 || s.Open {
+		return // the load alone, which stands beside its shares
+	}
+	bolt, _ := g.d.Unloaded(g.d.Preload.High)
+	hot, _ := g.d.Unloaded(most)
+	g.line(bolt, g.d.Preload.High, hot, most, thin)
+	g.line(hot, most, s.Length, s.Bolt, thin)
+	g.noteAt(s.Length, s.Bolt, true, "diagram_largest", "force", kilo(s.Bolt, true))
+}
+
+// noteAt names a place of the diagram. What lies below zero force is named at zero.
+func (g *diagram) noteAt(length, force float64, dot bool, key string, pairs ...string) {
+	g.notes = append(g.notes, note{g.at(length, math.Max(0, force)), dot, g.say(key, pairs...)})
 }
 
 // kilo prints a force in kN with two decimals, rounded up or down.
 func kilo(newton float64, up bool) string {
 	if up {
-		return fmt.Sprintf("%.2f", quantity.RoundUp(newton, 10)/1000)
+		return places(quantity.RoundUp(newton, 10) / 1000)
 	}
-	return fmt.Sprintf("%.2f", quantity.RoundDown(newton, 10)/1000)
+	return places(quantity.RoundDown(newton, 10) / 1000)
 }
+
+// signed prints a stated force in kN, rounded to two decimals.
+func signed(newton float64) string { return places(newton / 1000) }
+
+func places(v float64) string {
+	text := fmt.Sprintf("%.2f", math.Abs(v))
+	if v < 0 && text != "0.00" {
+		return "−" + text
+	}
+	return text
+}
+
+// compliance prints a compliance in um/kN.
+func compliance(mmPerNewton float64) string { return fmt.Sprintf("%.4g", mmPerNewton*1e6) }
