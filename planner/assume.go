@@ -122,6 +122,7 @@ func (w *work) assumeMethod() {
 	w.assumed("bearing faces reach to the hole: countersinks and chamfers of the holes are not deducted")
 	w.assumeHeat()
 	w.assumeThread()
+	w.assumeOwn()
 	if j.Nut != nil && j.NutClass == "" {
 		w.assumed(fmt.Sprintf("the nut matches the bolt (class %s or higher), so the bolt yields before its thread strips", j.Bolt.Class.NutClass()))
 	}

@@ -51,6 +51,9 @@ func (w *work) describeThread() {
 	if t.Inch {
 		series, basic, stress, inch = asme, asme, asme, ".inch"
 	}
+	if t.Own {
+		series = t.Source
+	}
 	w.input("d", "thread diameter", t.Diameter, "mm", series)
 	w.input("P", "pitch", t.Pitch, "mm", series)
 	n.pitchDiameter = w.lineBy("d_2"+inch, "d_2", "pitch diameter", t.PitchDiameter(), "mm", basic)

@@ -80,7 +80,7 @@ type layer struct {
 	expansion float64
 	source    string
 
-	material   string  // its name
+	material   string  // its name, as the tables of heat know it
 	hotModulus float64 // stated, MPa; 0: from the tables
 }
 
@@ -102,7 +102,7 @@ func (j Joint) layers() []layer {
 	}
 	for _, p := range j.Parts {
 		all = append(all, layer{p.Name, p.Thickness, p.Hole, p.Material.Modulus, p.Material.Expansion,
-			p.Material.Source, p.Material.Name, p.HotModulus})
+			p.Material.Source, curveName(p.Material.Name, p.Material.Own), p.HotModulus})
 	}
 	if j.NutWasher != nil {
 		all = append(all, washerLayer("nut washer", *j.NutWasher))
@@ -111,7 +111,7 @@ func (j Joint) layers() []layer {
 }
 
 func washerLayer(name string, w fastener.Washer) layer {
-	return layer{name, w.Thickness, w.InnerDiameter, w.Modulus, w.Expansion, w.Source, "steel washer", 0}
+	return layer{name, w.Thickness, w.InnerDiameter, w.Modulus, w.Expansion, w.Source, curveName("steel washer", w.Own), 0}
 }
 
 // face is a bearing face that the preload presses on.

@@ -81,9 +81,18 @@ func hotCurve(property, kind, name string) curve {
 	return hot().curves[property+"/"+found.curves[property]]
 }
 
+// curveName is the name by which a curve is sought: none of a user's own material or
+// class, whose name may begin like another's.
+func curveName(name string, own bool) string {
+	if own {
+		return ""
+	}
+	return name
+}
+
 // boltSoftness returns E at room temperature over E_S at a temperature of the bolt.
 func (j Joint) boltSoftness(temperature float64) (softness float64, source string, known bool) {
-	return softnessOf(j.Bolt.Class.Modulus, j.Bolt.HotModulus, hotCurve("modulus", "class", j.Bolt.Class.Name), temperature)
+	return softnessOf(j.Bolt.Class.Modulus, j.Bolt.HotModulus, hotCurve("modulus", "class", curveName(j.Bolt.Class.Name, j.Bolt.Class.Own)), temperature)
 }
 
 // layerSoftness is boltSoftness for a clamped layer.
@@ -114,7 +123,7 @@ func (j Joint) hotYield(temperature float64) (ratio float64, source string, know
 	if j.Bolt.HotYield > 0 {
 		return j.Bolt.HotYield / j.Bolt.Class.YieldStrength, stated, true
 	}
-	c := hotCurve("yield", "class", j.Bolt.Class.Name)
+	c := hotCurve("yield", "class", curveName(j.Bolt.Class.Name, j.Bolt.Class.Own))
 	ratio, known = c.at(temperature)
 	if !known && temperature <= softensFrom {
 		return 1, "not known, as at room temperature up to 100 degC", true

@@ -32,6 +32,7 @@ func (j Joint) Faults() []Fault {
 	if v.require(len(j.Parts) > 0, at("clamped"), "list the clamped parts from the head down", "no clamped part is stated") {
 		v.fit(j, len(v.faults) == before)
 	}
+	v.own(j)
 	v.materials(j)
 	v.pattern(j)
 	v.clamp(j.Clamp, j.slips())
@@ -151,17 +152,23 @@ func (v *validator) materials(j Joint) {
 // material requires what every material has; where is the path up to the
 // property.
 func (v *validator) material(m fastener.Material, where place) {
+	v.elastic(m.Modulus, m.Expansion, where)
+	where.field += "tensile_strength"
+	v.notNegative(m.TensileStrength, pressures, where, "the tensile strength")
+}
+
+// elastic requires a possible modulus and thermal expansion.
+func (v *validator) elastic(modulus, expansion float64, where place) {
 	property := func(name string) place {
 		p := where
 		p.field += name
 		return p
 	}
-	v.positive(m.Modulus, moduli, property("modulus"), "the modulus", "state modulus, for example 205 GPa")
+	v.positive(modulus, moduli, property("modulus"), "the modulus", "state modulus, for example 205 GPa")
 	const steepest = 1e-3
-	v.require(m.Expansion > -steepest && m.Expansion < steepest, property("expansion"),
+	v.require(expansion > -steepest && expansion < steepest, property("expansion"),
 		"state expansion, for example 11.5 um/m/K",
-		"the thermal expansion is %s; no material has that", measured{m.Expansion, quantity.Expansion})
-	v.notNegative(m.TensileStrength, pressures, property("tensile_strength"), "the tensile strength")
+		"the thermal expansion is %s; no material has that", measured{expansion, quantity.Expansion})
 }
 
 func (v *validator) clamp(c Clamp, slips bool) {

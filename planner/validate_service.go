@@ -63,7 +63,8 @@ func (v *validator) heat(j Joint) {
 			part--
 		}
 		if part < 0 || part >= len(j.Parts) {
-			continue // washers are steel, which the tables follow further than any bolt
+			v.washerHeat(l, part, parts)
+			continue
 		}
 		_, _, known := layerSoftness(l, parts)
 		v.require(known, at("temperature", itemOf("clamped", part, "material").path()),
@@ -72,12 +73,23 @@ func (v *validator) heat(j Joint) {
 	}
 }
 
+// washerHeat judges a washer; the tables follow their steel further than any bolt.
+func (v *validator) washerHeat(l layer, part int, highest float64) {
+	key := "washers.head"
+	if part >= 0 {
+		key = "washers.nut"
+	}
+	_, _, known := layerSoftness(l, highest)
+	v.require(known, at("temperature", key, "bolt.thread"), "list the washer as a clamped part with its hot_modulus",
+		"%g degC lies beyond the data for the modulus of the %s", highest, l.name)
+}
+
 func (v *validator) boltHeat(j Joint, highest float64) {
 	_, _, known := j.boltSoftness(highest)
-	v.require(known, at("temperature", "bolt.property_class"), "state bolt: {hot_modulus: ...}, the modulus at the bolt's highest temperature",
+	v.require(known, at("temperature", "bolt.property_class", "bolt.thread"), "state bolt: {hot_modulus: ...}, the modulus at the bolt's highest temperature",
 		"%g degC lies beyond the data for the modulus of class %s", highest, j.Bolt.Class.Name)
 	_, _, known = j.hotYield(highest)
-	v.require(known, at("temperature", "bolt.property_class"),
+	v.require(known, at("temperature", "bolt.property_class", "bolt.thread"),
 		"state bolt: {hot_yield: ...}, the yield strength at the bolt's highest temperature",
 		"%g degC lies beyond the data for the yield strength of class %s", highest, j.Bolt.Class.Name)
 }

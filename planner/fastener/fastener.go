@@ -6,6 +6,9 @@
 // In: a designation as the trade writes it ("M12x1.25", "hexagon flange",
 // "10.9", "EN-GJL-250"). Out: plain dimensions in mm, N and MPa. It never
 // guesses: an unknown designation is an UnknownError that lists what is known.
+//
+// A record that is Own comes from a user's own library and not from these tables:
+// only what it states is known of it, however its name reads.
 package fastener
 
 import (
@@ -34,6 +37,8 @@ type Head struct {
 	Height           float64 // k, mm, nominal
 	WidthAcrossFlats float64 // s, mm: spanner size, or hexagon key size of a socket cap head
 	Source           string  // table and mark of the row
+
+	Own bool // of a user's own library
 }
 
 // Nut is a nut of one size, from its product standard.
@@ -44,6 +49,8 @@ type Nut struct {
 	Height           float64 // m, mm: least height (m min), so the thread that is surely there
 	WidthAcrossFlats float64 // s, mm
 	Source           string
+
+	Own bool // of a user's own library
 }
 
 // Washer is a plain washer of one size, from its product standard.
@@ -57,6 +64,8 @@ type Washer struct {
 	Modulus          float64 // E, MPa
 	Expansion        float64 // alpha, 1/K
 	Source           string
+
+	Own bool // of a user's own library
 }
 
 // PropertyClass is the strength of a bolt, ISO 898-1, at one thread size.
@@ -69,6 +78,8 @@ type PropertyClass struct {
 	Modulus         float64 // E_S, MPa
 	Expansion       float64 // alpha_S, 1/K
 	Source          string
+
+	Own bool // of a user's own library
 }
 
 // Material is the material of a clamped or tapped part.
@@ -80,12 +91,19 @@ type Material struct {
 	ShearStrength    float64 // tau_B, MPa; 0: not known
 	TensileStrength  float64 // R_m min, MPa; 0: not known
 	Source           string
+
+	Own bool // of a user's own library
 }
 
 // NutClass returns the least nut class that belongs to the bolt's: its figure before
 // the dot, ISO 898-2; the same class of stainless steel, ISO 3506-2; the same grade,
-// SAE J995; what ASTM A193 and A320 recommend. From memory but for ISO 898-2.
+// SAE J995; what ASTM A193 and A320 recommend. Of a user's own class, that of the
+// bolts of ISO 898-1 which are at least as strong, "" where there are none. From memory
+// but for ISO 898-2.
 func (c PropertyClass) NutClass() string {
+	if c.Own {
+		return nutClassOf(c.TensileStrength)
+	}
 	switch {
 	case strings.HasPrefix(c.Name, "A2-"), strings.HasPrefix(c.Name, "A4-"), strings.HasPrefix(c.Name, "SAE"):
 		return c.Name
@@ -105,3 +123,20 @@ func (c PropertyClass) NutClass() string {
 	class, _, _ := strings.Cut(c.Name, ".")
 	return class
 }
+
+// nutClassOf returns the least nut class for bolts of that R_m, MPa.
+func nutClassOf(tensileStrength float64) string {
+	for _, n := range nutClasses {
+		if tensileStrength <= n.tensileStrength {
+			return n.name
+		}
+	}
+	return ""
+}
+
+// nutClasses are the nut classes with the greatest R_m min, MPa, of the bolts of
+// ISO 898-1 Table 3 that each goes with by ISO 898-2.
+var nutClasses = []struct {
+	name            string
+	tensileStrength float64
+}{{"5", 520}, {"6", 600}, {"8", 830}, {"10", 1040}, {"12", 1220}}

@@ -20,6 +20,9 @@ type Thread struct {
 	Pitch       float64 // P, mm
 	Coarse      bool
 	Inch        bool // unified: the stress area is ASME B1.1's
+
+	Own    bool   // of a user's own library, with the same profile
+	Source string // of an own thread; else from ISO 261 or ASME B1.1
 }
 
 // ParseThread reads a designation of ISO 965-1: "M12" is the coarse thread,

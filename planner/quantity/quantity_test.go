@@ -184,6 +184,7 @@ func TestFormatPrintsAsItIsWritten(t *testing.T) {
 		{83000, quantity.Torque, "83 N.m"},
 		{205000, quantity.Pressure, "205000 MPa"},
 		{11.5e-6, quantity.Expansion, "11.5 um/m/K"},
+		{300, quantity.Hardness, "300 HV"},
 		{-273.15, quantity.Temperature, "-273.15 degC"},
 		{0.14, quantity.Ratio, "0.14"},
 		{2e6, quantity.Number, "2000000"},
@@ -197,7 +198,7 @@ func TestFormatPrintsAsItIsWritten(t *testing.T) {
 // What Format prints, Parse reads as the same value, to the 6 digits printed.
 func TestFormatReadsBack(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
-		d := quantity.Dimension(rapid.IntRange(int(quantity.Number), int(quantity.Expansion)).Draw(t, "dimension"))
+		d := quantity.Dimension(rapid.IntRange(int(quantity.Number), int(quantity.Hardness)).Draw(t, "dimension"))
 		v := rapid.Float64().Filter(func(v float64) bool {
 			return math.Abs(v) < 1e300 && math.Abs(v) > 1e-300
 		}).Draw(t, "v")
@@ -213,7 +214,7 @@ func FuzzParseRange(f *testing.F) {
 		f.Add(s, int(quantity.Force))
 	}
 	f.Fuzz(func(t *testing.T, s string, d int) {
-		dimension := quantity.Dimension(((d % 10) + 10) % 10)
+		dimension := quantity.Dimension(((d % 11) + 11) % 11)
 		r, err := quantity.ParseRange(s, dimension)
 		if err == nil && (!r.IsFinite() || r.Low > r.High) {
 			t.Errorf("%q became %s", s, fmt.Sprint(r))

@@ -60,7 +60,7 @@ func roundTo6(v float64) float64 {
 // Parse reads it back.
 func Format(v float64, d Dimension) string {
 	name := map[Dimension]string{Length: "mm", Area: "mm2", Force: "N", Torque: "N.m", Pressure: "MPa", Angle: "deg",
-		Temperature: "degC", Expansion: "um/m/K"}[d]
+		Temperature: "degC", Expansion: "um/m/K", Hardness: "HV"}[d]
 	if d == Force && math.Abs(v) >= 1e3 {
 		name = "kN"
 	}

@@ -20,6 +20,7 @@ const (
 	Angle                        // deg
 	Temperature                  // degC
 	Expansion                    // 1/K
+	Hardness                     // HV
 )
 
 // dimensions says for each dimension how an error names it and an example.
@@ -34,6 +35,7 @@ var dimensions = map[Dimension]struct{ name, example string }{
 	Angle:       {"angle", "30 deg"},
 	Temperature: {"temperature", "90 degC"},
 	Expansion:   {"thermal expansion", "11.5 um/m/K"},
+	Hardness:    {"hardness", "300 HV"},
 }
 
 // String names the dimension as error messages do.
@@ -96,6 +98,7 @@ var units = []unit{
 	{"K", Temperature, 1, -273.15},
 	{"um/m/K", Expansion, 1e-6, 0},
 	{"1/K", Expansion, 1, 0},
+	{"HV", Hardness, 1, 0},
 	{"%", Ratio, 0.01, 0},
 }
 

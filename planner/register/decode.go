@@ -18,9 +18,8 @@ import (
 // run finds all problems.
 type decoder struct {
 	*problems
-	library     *library
-	libraryLost bool
-	unread      []string // paths of values that are missing or could not be read
+	library *library // of the register; nil outside joints
+	unread  []string // paths of values that are missing or could not be read
 }
 
 // judges reports whether everything that a rule looked at was read: a fault that
@@ -189,7 +188,7 @@ func lookUp[T any](f field, find func(string) (T, error)) T {
 	v, err := find(text)
 	var unknown *fastener.UnknownError
 	switch {
-	case errors.As(err, &unknown) && f.d.libraryLost:
+	case errors.Is(err, errUnread): // already a problem
 		f.lose()
 	case errors.As(err, &unknown):
 		f.wrong(unknown.Error(), suggest(unknown.Name, unknown.Known, "known are"))

@@ -134,9 +134,7 @@ func readForces(joint *object, j *planner.Joint, f field) []group.Share {
 	if !ok {
 		return nil
 	}
-	if !filepath.IsAbs(name) {
-		name = filepath.Join(filepath.Dir(f.d.source.name), name)
-	}
+	name = f.beside(name)
 	shares, err := group.ReadCSV(name, data)
 	var e *group.ProblemsError
 	if errors.As(err, &e) {
@@ -174,6 +172,14 @@ func boltsOf(shares []group.Share) (bolts, missing int) {
 		bolts++
 	}
 	return bolts, missing
+}
+
+// beside returns the name of a file that the register names as messages print it.
+func (f field) beside(name string) string {
+	if filepath.IsAbs(name) {
+		return name
+	}
+	return filepath.Join(filepath.Dir(f.d.source.name), name)
 }
 
 // open reads a file that the value names, and notes why it cannot.

@@ -252,7 +252,7 @@ func readParts(f field) []planner.Part {
 	return parts
 }
 
-// readMaterial reads a name of the library or a mapping of properties.
+// readMaterial reads a name of the tables or the library, or a mapping of properties.
 func readMaterial(f field) fastener.Material {
 	if f.node.kind != mapping {
 		return lookUp(f, f.d.library.findMaterial)

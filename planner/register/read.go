@@ -17,6 +17,7 @@ func Read(sources ...Source) ([]planner.Joint, error) {
 	var joints []planner.Joint
 	var all []Problem
 	seen := map[string]Problem{} // id -> where it stands
+	beside := map[Problem]bool{} // of files that several registers may name: told once
 	for _, in := range sources {
 		found, problems := readSource(in)
 		for _, f := range found {
@@ -30,7 +31,12 @@ func Read(sources ...Source) ([]planner.Joint, error) {
 			seen[f.joint.ID] = place
 			joints = append(joints, f.joint)
 		}
-		all = append(all, sorted(in.Name, problems)...)
+		for _, p := range sorted(in.Name, problems) {
+			if p.File == in.Name || !beside[p] {
+				all = append(all, p)
+				beside[p] = true
+			}
+		}
 	}
 	if len(all) > 0 {
 		return nil, &ProblemsError{all}
@@ -49,14 +55,12 @@ type header struct {
 	assembly   string
 	revision   string
 	preparedBy string
+	defaults   *node
 	library    *library
-	// libraryLost: not all of it could be read, so a name that is not found may be in it
-	libraryLost bool
-	defaults    *node
 }
 
 func readSource(in Source) ([]located, []Problem) {
-	s, bad := guard(in)
+	s, bad := guard(in, aRegister)
 	if len(bad) > 0 {
 		return nil, bad
 	}
@@ -92,21 +96,21 @@ func readHeader(d *decoder, top *node, cut bool) (header, []field) {
 		if len(d.all) == 0 {
 			d.at(position{1, 1}, "the register is empty", "begin with assembly, revision and joints")
 		}
-		return header{defaults: unknown}, nil
+		return header{defaults: unknown, library: unreadLibrary()}, nil
 	}
 	o := field{d, top, "the register", ""}.object("assembly", "revision", "prepared_by", "library", "defaults", "joints")
-	h := header{revision: o.label("revision"), preparedBy: o.label("prepared_by")}
+	h := header{revision: o.label("revision"), preparedBy: o.label("prepared_by"), library: &library{}}
 	if o.require("assembly", "the machine the joints belong to") {
 		h.assembly = o.at("assembly").label()
 	}
-	if o.stated("library") {
+	switch {
+	case slices.Contains(d.unread, "library"): // most likely misspelt
+		h.library = unreadLibrary()
+	case o.stated("library"):
 		h.library = readLibraries(o.at("library"))
 	}
-	if h.libraryLost = !d.knows("library"); h.libraryLost {
-		h.library = nil // joints that rest on it are not judged by what is left of it
-	}
 	switch {
-	case slices.Contains(d.unread, "defaults"): // most likely misspelt
+	case slices.Contains(d.unread, "defaults"):
 		h.defaults = unknown
 	case o.stated("defaults"):
 		h.defaults = readDefaults(o.at("defaults"))
@@ -157,7 +161,7 @@ func readChunk(s *source, h header, c chunk) jointResult {
 // readJoint reads one joint and judges it by the rules that rest on nothing
 // unread.
 func readJoint(s *source, h header, own *node) jointResult {
-	d := &decoder{problems: &problems{source: s}, library: h.library, libraryLost: h.libraryLost}
+	d := &decoder{problems: &problems{source: s}, library: h.library}
 	whole := field{d, own, "a joint", ""}
 	if !whole.is(mapping, "write it as - id: A-010, with its other keys below") {
 		return jointResult{problems: d.all}

@@ -55,12 +55,24 @@ func ReadSource(r io.Reader, name string) (Source, error) {
 // position is a place in a source, from 1; the zero position is the whole file.
 type position struct{ line, column int }
 
-// source is a register cut into lines.
+// source is a register, or a library that one names, cut into lines.
 type source struct {
 	name  string
+	kind  kindOfFile
 	lines []string
 	open  func(name string) ([]byte, error) // Source.Open
 }
+
+// kindOfFile says what a file is, as messages name it.
+type kindOfFile struct {
+	one, many string
+	common    string // how values are written that several entries share
+}
+
+var (
+	aRegister = kindOfFile{"register", "registers", "write the values out, or put them under defaults"}
+	aLibrary  = kindOfFile{"library", "libraries", "write the values out"}
+)
 
 func (s *source) line(n int) string {
 	if n < 1 || n > len(s.lines) {
@@ -71,8 +83,8 @@ func (s *source) line(n int) string {
 
 // guard makes lines of the bytes, or says why they are not parsed: bytes that are
 // no text, and nesting that no register needs but that makes parsers slow.
-func guard(in Source) (*source, []Problem) {
-	s := &source{name: in.Name, open: in.Open}
+func guard(in Source, kind kindOfFile) (*source, []Problem) {
+	s := &source{name: in.Name, kind: kind, open: in.Open}
 	p := &problems{source: s}
 	data := in.Data
 	if bytes.HasPrefix(data, []byte("\xef\xbb\xbf")) {
@@ -110,11 +122,14 @@ func guardLine(p *problems, number int, line string) bool {
 	}
 	if indent > maxIndent || strings.HasPrefix(line[indent:],
 		strings.Repeat("- ", maxDepth)) || strings.HasPrefix(line[indent:], strings.Repeat("? ", maxDepth)) {
-		p.at(position{number, indent + 1}, "the line nests too deeply", "a register needs no more than five levels")
+		p.at(position{number, indent + 1}, "the line nests too deeply", p.source.kind.levels())
 		return false
 	}
 	return true
 }
+
+// levels is the mend of what nests too deeply.
+func (k kindOfFile) levels() string { return "a " + k.one + " needs no more than five levels" }
 
 // nesting returns where brackets nest too deeply in a run of lines, if they do.
 // Brackets in quotes and comments do not count.

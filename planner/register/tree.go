@@ -64,7 +64,7 @@ func parse(p *problems, c chunk) *node {
 	}
 	if pos, deep := nesting(c.lines); deep {
 		p.at(position{pos.line + c.first - 1, pos.column}, "the brackets nest too deeply",
-			"a register needs no more than five levels")
+			p.source.kind.levels())
 		return nil
 	}
 	file, err := parseYAML(text)
@@ -75,7 +75,7 @@ func parse(p *problems, c chunk) *node {
 	}
 	for i, doc := range file.Docs {
 		if i > 0 && doc.Body != nil {
-			t.problem(doc.Start, "a second document begins here", "put each register into a file of its own")
+			t.problem(doc.Start, "a second document begins here", "put each "+p.source.kind.one+" into a file of its own")
 			break
 		}
 	}
@@ -127,7 +127,7 @@ func (t *treeBuilder) pos(tk *token.Token) position {
 
 // node converts a value. What is refused becomes an empty node with a problem.
 func (t *treeBuilder) node(v ast.Node) *node {
-	tk := v.GetToken()
+	tk, kind := v.GetToken(), t.p.source.kind
 	n := &node{pos: t.pos(tk)}
 	switch v := v.(type) {
 	case *ast.MappingNode:
@@ -153,16 +153,16 @@ func (t *treeBuilder) node(v ast.Node) *node {
 		n.kind, n.text = scalar, strings.TrimSpace(tk.Value)
 	case *ast.AnchorNode:
 		n.kind = refused
-		t.problem(tk, "anchors are not used in registers", "write the values out, or put them under defaults")
+		t.problem(tk, "anchors are not used in "+kind.many, kind.common)
 	case *ast.AliasNode:
 		n.kind = refused
-		t.problem(tk, "aliases are not used in registers", "write the values out, or put them under defaults")
+		t.problem(tk, "aliases are not used in "+kind.many, kind.common)
 	case *ast.TagNode:
 		n.kind = refused
-		t.problem(tk, "tags are not used in registers", "remove the tag")
+		t.problem(tk, "tags are not used in "+kind.many, "remove the tag")
 	default:
 		n.kind = refused
-		t.problem(tk, "this kind of YAML is not used in registers", "write plain keys, lists and values")
+		t.problem(tk, "this kind of YAML is not used in "+kind.many, "write plain keys, lists and values")
 	}
 	return n
 }
@@ -173,7 +173,7 @@ func (t *treeBuilder) mapping(n *node, values []*ast.MappingValueNode) {
 	for _, v := range values {
 		tk := v.Key.GetToken()
 		if _, merge := v.Key.(*ast.MergeKeyNode); merge {
-			t.problem(tk, "merge keys are not used in registers", "put common values under defaults")
+			t.problem(tk, "merge keys are not used in "+t.p.source.kind.many, t.p.source.kind.common)
 			n.partial = true
 			continue
 		}
