@@ -135,8 +135,6 @@ func (w *work) checkSpectrum(endurance float64) {
 	limit := endurance / w.joint.Safety.Fatigue
 	var largest, damage float64
 	for i, b := range w.joint.Loads.Spectrum {
-		w.inputAt(i+1, "F_B_lo", "axial load, lower end of block", b.Low, "N", stated)
-		w.inputAt(i+1, "F_B_hi", "axial load, upper end of block", b.High, "N", stated)
 		w.inputAt(i+1, "N_B", "cycles of block", b.Cycles, "-", stated)
 		amplitude := w.amplitude(b.High-b.Low, 0)
 		rule := "sig_B_i"

@@ -31,8 +31,7 @@ func (w *work) operate() {
 	a := &w.axial
 	if len(j.Group) == 0 {
 		axial := j.Loads.Axial
-		w.input("F_A_min", "lowest axial load, negative is compression", axial.Low, "N", stated)
-		w.input("F_A_max", "highest axial load", axial.High, "N", stated)
+		w.axialRange()
 		w.input("F_Q", "transverse load carried by friction", j.Clamp.Transverse, "N", stated)
 		*a = axialLoads{axial.Low, axial.High, axial.High, axial.Low, axial.High, j.Clamp.Transverse, j.Clamp.Transverse}
 		return
@@ -58,6 +57,26 @@ func (w *work) operate() {
 	a.swingHi = at("F_A_o", "upper end of the largest swing, unloaded included", "group.high", g.swingHigh, math.Max(0, shares[g.swingHigh].Axial))
 	a.transverse = at("F_Q", "transverse load of the bolt whose clamp is needed most", "group.transverse", g.clamp, transverse(shares[g.clamp]))
 	a.largestTransverse = at("F_Q_max", "highest transverse load of any bolt", "group.transverse", g.transverse, transverse(shares[g.transverse]))
+}
+
+// axialRange puts down the ends of the axial load, which a spectrum sets where they
+// are the ends of its blocks.
+func (w *work) axialRange() {
+	const low, high = "lowest axial load, negative is compression", "highest axial load"
+	l := w.joint.Loads
+	least, most := math.Inf(1), math.Inf(-1)
+	for i, b := range l.Spectrum {
+		w.inputAt(i+1, "F_B_lo", "axial load, lower end of block", b.Low, "N", stated)
+		w.inputAt(i+1, "F_B_hi", "axial load, upper end of block", b.High, "N", stated)
+		least, most = math.Min(least, b.Low), math.Max(most, b.High)
+	}
+	if least == l.Axial.Low && most == l.Axial.High {
+		w.lineBy("F_A_min.spectrum", "F_A_min", low, least, "N", arithmetic)
+		w.lineBy("F_A_max.spectrum", "F_A_max", high, most, "N", arithmetic)
+		return
+	}
+	w.input("F_A_min", low, l.Axial.Low, "N", stated)
+	w.input("F_A_max", high, l.Axial.High, "N", stated)
 }
 
 func transverse(s group.Share) float64 { return math.Hypot(s.X, s.Y) }

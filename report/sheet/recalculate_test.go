@@ -226,6 +226,20 @@ func TestChangedInputsMoveTheTorque(t *testing.T) {
 		{10, "s_S", 0.99, func(j *planner.Joint) { j.Tightening.Snug = 0.99 }},       // rounds to the target: infeasible
 		{0, "F_A_max", 60000, func(j *planner.Joint) { j.Loads.Axial.High = 60000 }}, // no window: infeasible
 		{9, "mu_G_max", 0.10, func(j *planner.Joint) { j.Friction.Thread.High = 0.10 }},
+		{12, "a_A", 16, func(j *planner.Joint) { *j.Eccentric.LoadArm = 16 }},
+		{12, "M_B_hi", 20, func(j *planner.Joint) { j.Eccentric.MomentHigh = 20000 }},
+		{12, "s_sym", -1, func(j *planner.Joint) { j.Eccentric.BoltOffset = -1 }},
+		{12, "l_A", 4, func(j *planner.Joint) { j.Loads.Introduction.Lead = 4 }},
+		{13, "mu_T", 0.1, func(j *planner.Joint) { j.Clamp.InterfaceFriction = 0.1 }},
+		{14, "temp_N", 45, func(j *planner.Joint) { j.Temperature.Assembly.High = 45 }},
+		{14, "rho_rel", 0.06, func(j *planner.Joint) { j.Losses.Relaxation = 0.06 }},
+		{14, "F_B_hi_2", 60000, func(j *planner.Joint) { j.Loads.Spectrum[1].High, j.Loads.Axial.High = 60000, 60000 }},
+		{14, "fz_L_1", 12, func(j *planner.Joint) { j.Losses.Layers[0].Amount = 0.012 }},
+		{15, "w_M", 20, func(j *planner.Joint) { j.Tapped.OuterDiameter = 20 }},
+		{16, "S_G", 1.9, func(j *planner.Joint) { j.Safety.Slip = 1.9 }},
+		{17, "F_strip", 12500, func(j *planner.Joint) { j.Tapped.Insert.PullOut = 12500 }},
+		{18, "G_A_1", 12000, func(j *planner.Joint) { j.Group[5].Axial = 12000 }},
+		{20, "R_p02", 500, func(j *planner.Joint) { j.Bolt.Class.YieldStrength = 500 }},
 	}
 	var books [][]byte
 	var want []planner.Plan
