@@ -1,6 +1,10 @@
 package planner
 
-import "math"
+import (
+	"math"
+
+	"clampback/planner/quantity"
+)
 
 // anglePerForce puts down the angle turned per clamp force built up, deg/N:
 // (360/P)(delta_S + delta_P).
@@ -44,7 +48,7 @@ func snugOf(t Tightening, target float64) float64 {
 	if snug < t.Step {
 		return snug
 	}
-	return math.Round(snug/t.Step) * t.Step
+	return quantity.RoundDown(snug+t.Step/2, t.Step)
 }
 
 // angleWindow plans torque to snug, then angle: the snug torque gives a

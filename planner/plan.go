@@ -130,15 +130,18 @@ type Line struct {
 	Index int    `json:"-"` // place in a repeated line (layer, shank piece), from 1; 0: not repeated
 }
 
-// Headings returns what the record of a whole register is headed with: the
-// assemblies and the revisions of its joints, each once, in order.
-func Headings(joints []Joint) (assembly, revision string) {
-	var assemblies, revisions []string
+// Heading is what the record of a whole register is headed with.
+type Heading struct{ Assembly, Revision, PreparedBy string }
+
+// Headings returns the assemblies, revisions and authors of joints, each once, in order.
+func Headings(joints []Joint) Heading {
+	var assemblies, revisions, authors []string
 	for _, j := range joints {
 		assemblies = appendNew(assemblies, j.Assembly)
 		revisions = appendNew(revisions, j.Revision)
+		authors = appendNew(authors, j.PreparedBy)
 	}
-	return strings.Join(assemblies, "; "), strings.Join(revisions, "; ")
+	return Heading{strings.Join(assemblies, "; "), strings.Join(revisions, "; "), strings.Join(authors, "; ")}
 }
 
 func appendNew(list []string, s string) []string {

@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"clampback/friction"
+	"clampback/planner/quantity"
 )
 
 // window is the interval the setting may lie in: a torque (N.mm) for torque
@@ -81,10 +82,10 @@ func settingIn(win window, middle, step float64, aim Aim) float64 {
 	if !(win.low <= win.high) || win.high <= 0 {
 		return 0
 	}
-	highest := math.Floor(win.high/step*(1+rounding)) * step
+	highest := quantity.RoundDown(win.high, step)
 	setting := highest
 	if aim == AimMiddle {
-		setting = math.Round(middle/step) * step
+		setting = quantity.RoundDown(middle+step/2, step)
 		if setting < win.low*(1-rounding) {
 			setting += step
 		}

@@ -162,8 +162,11 @@ func (t *text) setting(p planner.Plan) {
 	if p.Joint.Tightening.Method == planner.TorqueAndAngleMethod {
 		t.angleSetting(p)
 	} else {
-		t.printf("    torque window                  %s to %s N.m\n",
-			tenth(quantity.RoundUp(q.WindowLow, 0.1)), tenth(quantity.RoundDown(q.WindowHigh, 0.1)))
+		low, high := tenth(quantity.RoundUp(q.WindowLow, 0.1)), tenth(quantity.RoundDown(q.WindowHigh, 0.1))
+		if step := p.Joint.Tightening.Step / 1000; step < 0.1 { // a fine setting lies inside what is printed
+			low, high = quantity.Trim(quantity.RoundUp(q.WindowLow, step)), quantity.Trim(quantity.RoundDown(q.WindowHigh, step))
+		}
+		t.printf("    torque window                  %s to %s N.m\n", low, high)
 		if q.Target > 0 {
 			t.printf("    target torque                  %s N.m\n", quantity.Trim(q.Target))
 			t.printf("    angle from snug %s N.m        %.0f deg, %.0f to %.0f deg to expect\n",

@@ -30,7 +30,7 @@ func readJoints(c *cobra.Command, files []string) ([]planner.Joint, error) {
 			}
 			stdin = true
 		}
-		source, err := openSource(c.InOrStdin(), name)
+		source, err := openSource(c.Context(), c.InOrStdin(), name)
 		if err != nil {
 			return nil, err
 		}
@@ -39,9 +39,9 @@ func readJoints(c *cobra.Command, files []string) ([]planner.Joint, error) {
 	return register.Read(sources...)
 }
 
-func openSource(stdin io.Reader, name string) (register.Source, error) {
+func openSource(ctx context.Context, stdin io.Reader, name string) (register.Source, error) {
 	if name == "-" {
-		return register.ReadSource(stdin, "standard input")
+		return readInput(ctx, stdin)
 	}
 	f, err := os.Open(name)
 	if err != nil {
@@ -54,6 +54,26 @@ func openSource(stdin io.Reader, name string) (register.Source, error) {
 	source, err := register.ReadSource(f, name)
 	source.Open = beside(filepath.Dir(name))
 	return source, err
+}
+
+// readInput reads standard input, and gives up waiting for it when the program is
+// interrupted: a read from a terminal cannot be cut short.
+func readInput(ctx context.Context, stdin io.Reader) (register.Source, error) {
+	type result struct {
+		source register.Source
+		err    error
+	}
+	done := make(chan result, 1)
+	go func() {
+		source, err := register.ReadSource(stdin, "standard input")
+		done <- result{source, err}
+	}()
+	select {
+	case r := <-done:
+		return r.source, r.err
+	case <-ctx.Done():
+		return register.Source{}, ctx.Err()
+	}
 }
 
 // maxBeside is the largest file that a register may name, bytes.

@@ -59,6 +59,28 @@ func TestFullDiskIsReported(t *testing.T) {
 	defer full.Close()
 	_, err = stoppable{t.Context(), full}.Write([]byte("x"))
 	assert.ErrorIs(t, err, syscall.ENOSPC)
+
+	// A batch whose file meets the full disk names it, and leaves nothing behind.
+	dir := filepath.Join(t.TempDir(), "cards")
+	b, err := newBatch(t.Context(), dir)
+	require.NoError(t, err)
+	err = b.Write("a.pdf", func(w io.Writer) error {
+		_, err := io.Copy(full, strings.NewReader("x"))
+		return err
+	})
+	assert.ErrorIs(t, err, syscall.ENOSPC)
+	assert.ErrorContains(t, err, filepath.Join(dir, "a.pdf"))
+	b.Close()
+	assert.NoDirExists(t, dir)
+}
+
+// Ctrl-C while the program waits for standard input ends it: status 130.
+func TestCtrlCWhileWaitingForInput(t *testing.T) {
+	ctx, cancel := context.WithCancel(t.Context())
+	cancel()
+	waiting, _ := io.Pipe()
+	_, err := openSource(ctx, waiting, "-")
+	assert.ErrorIs(t, err, context.Canceled)
 }
 
 func TestInterruptLeavesNothing(t *testing.T) {

@@ -39,8 +39,8 @@ what binds, the checks and the assumptions.`,
 			}
 			out := stoppable{c.Context(), c.OutOrStdout()}
 			if format == "json" {
-				assembly, revision := planner.Headings(joints)
-				err = report.WriteJSON(out, assembly, revision, plans)
+				h := planner.Headings(joints)
+				err = report.WriteJSON(out, h.Assembly, h.Revision, plans)
 			} else {
 				err = report.WriteText(out, plans, report.TextOptions{Trace: trace, Colour: useColour(c.OutOrStdout())})
 			}

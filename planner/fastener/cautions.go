@@ -9,6 +9,7 @@ import (
 
 // Caution is what to heed with a property class besides its strength.
 type Caution struct {
+	Kind   string // "hydrogen", "seizing"
 	Text   string
 	Source string
 }
@@ -21,7 +22,7 @@ type classCaution struct {
 var cautions = sync.OnceValue(func() []classCaution {
 	var all []classCaution
 	for _, r := range table.Read(tables, "cautions.csv") {
-		all = append(all, classCaution{r.Text("prefix"), Caution{r.Text("caution"), r.Text("source")}})
+		all = append(all, classCaution{r.Text("prefix"), Caution{r.Text("kind"), r.Text("caution"), r.Text("source")}})
 	}
 	return all
 })

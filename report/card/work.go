@@ -25,6 +25,11 @@ func (d *document) steps(p planner.Plan) []item {
 		items = append(items, item{text: say("step_lubricate")})
 	}
 	items = append(items, item{text: say("step_hand")})
+	for _, c := range p.Joint.Bolt.Class.Cautions() {
+		if c.Kind == "seizing" {
+			items = append(items, item{text: say("step_seizing")})
+		}
+	}
 	if key := held(p.Joint); key != "" {
 		items = append(items, item{text: say(key)})
 	}

@@ -31,11 +31,11 @@ func Write(w io.Writer, plan planner.Plan, o Options) error {
 // WriteTogether writes the cards of all joints as one document with a bookmark
 // for each joint; pages are numbered a joint.
 func WriteTogether(w io.Writer, plans []planner.Plan, o Options) error {
-	title := ""
-	if len(plans) > 0 {
-		title = plans[0].Joint.Assembly
+	joints := make([]planner.Joint, len(plans))
+	for i, p := range plans {
+		joints[i] = p.Joint
 	}
-	return write(w, plans, o, title)
+	return write(w, plans, o, planner.Headings(joints).Assembly)
 }
 
 func write(w io.Writer, plans []planner.Plan, o Options, title string) error {

@@ -8,11 +8,11 @@ import (
 
 // writeAbout writes how to read the book, the cautions and the sources.
 func (b *book) writeAbout(plans []planner.Plan) error {
-	var joint planner.Joint
-	if len(plans) > 0 {
-		joint = plans[0].Joint
+	joints := make([]planner.Joint, len(plans))
+	for i, p := range plans {
+		joints[i] = p.Joint
 	}
-	stream, err := b.openSheet(aboutSheet, len(plans)+1, page{joint: joint}, []float64{4, 110})
+	stream, err := b.openSheet(aboutSheet, len(plans)+1, page{head: planner.Headings(joints)}, []float64{4, 110})
 	if err != nil {
 		return err
 	}

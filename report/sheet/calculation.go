@@ -66,7 +66,8 @@ func formula(style int, text string, cached any) excelize.Cell {
 // writeCalculation writes a joint's sheet: verdict, every line of the trace, the
 // checks, the assumptions.
 func (b *book) writeCalculation(c *calculation, index int) error {
-	stream, err := b.openSheet(c.sheet, index, page{landscape: false, titleRows: "$6:$6", joint: c.plan.Joint},
+	stream, err := b.openSheet(c.sheet, index, page{landscape: false, titleRows: fmt.Sprintf("$%d:$%d", headingRow, headingRow),
+		head: planner.Headings([]planner.Joint{c.plan.Joint})},
 		calculationWidths)
 	if err != nil {
 		return err

@@ -12,7 +12,7 @@ import (
 type page struct {
 	landscape bool
 	titleRows string // rows repeated on each page: "$6:$6"
-	joint     planner.Joint
+	head      planner.Heading
 }
 
 // openSheet prepares a sheet for writing: protection, print set-up, widths.
@@ -36,7 +36,7 @@ func (b *book) openSheet(name string, index int, p page, widths []float64) (*exc
 	if err := f.SetSheetProps(name, &excelize.SheetPropsOptions{FitToPage: &fit}); err != nil {
 		return nil, err
 	}
-	title := cut(clean(p.joint.Assembly+", revision "+orNone(p.joint.Revision)), 100)
+	title := cut(clean(p.head.Assembly+", revision "+orNone(p.head.Revision)), 100)
 	title = strings.ReplaceAll(title, "&", "&&") // & begins a code of the header
 	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + title + "&R&A",
 		OddFooter: "&LCalculated, not tested&RPage &P of &N"}); err != nil {

@@ -108,15 +108,12 @@ func (b *book) writeRegister(calculations []calculation) error {
 	for i, c := range columns {
 		widths[i], heading[i] = c.width, cell(b.styles.heading, c.heading)
 	}
-	first := planner.Joint{}
-	if len(calculations) > 0 {
-		first = calculations[0].plan.Joint
-	}
+	h := planner.Headings(jointsOf(calculations))
 	if err := b.filterRegister(len(calculations)); err != nil {
 		return err
 	}
 	stream, err := b.openSheet(registerSheet, 0, page{landscape: true,
-		titleRows: fmt.Sprintf("$%d:$%d", registerHeading, registerHeading), joint: first}, widths)
+		titleRows: fmt.Sprintf("$%d:$%d", registerHeading, registerHeading), head: h}, widths)
 	if err != nil {
 		return err
 	}
@@ -126,10 +123,9 @@ func (b *book) writeRegister(calculations []calculation) error {
 		return err
 	}
 	w := &writer{stream, 1}
-	assembly, revision := planner.Headings(jointsOf(calculations))
 	rows := [][]any{
 		{cell(b.styles.title, "Joint register")},
-		{cell(0, clean(assembly+", revision "+orNone(revision)+", prepared by "+orNone(first.PreparedBy)))},
+		{cell(0, clean(h.Assembly+", revision "+orNone(h.Revision)+", prepared by "+orNone(h.PreparedBy)))},
 		{cell(0, "Limits are rounded inwards. For torque and angle the setting is the angle; its torques are those to expect at the end. "+caution)},
 		{},
 		heading,
