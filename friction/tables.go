@@ -4,7 +4,6 @@ import (
 	"embed"
 	"sync"
 
-	"clampback/planner/fastener"
 	"clampback/planner/quantity"
 	"clampback/planner/table"
 )
@@ -31,7 +30,7 @@ type GuideScatter struct {
 }
 
 // FindCondition returns the condition of that name, or a
-// *fastener.UnknownError with the names there are.
+// *table.UnknownError with the names there are.
 func FindCondition(name string) (Condition, error) {
 	var known []string
 	for _, c := range conditions() {
@@ -40,7 +39,7 @@ func FindCondition(name string) (Condition, error) {
 		}
 		known = append(known, c.Name)
 	}
-	return Condition{}, &fastener.UnknownError{Kind: "friction condition", Name: name, Known: known}
+	return Condition{}, &table.UnknownError{Kind: "friction condition", Name: name, Known: known}
 }
 
 // GuideFor returns the guide row of the tightening factor for a torque wrench

@@ -7,8 +7,8 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"clampback/friction"
-	"clampback/planner/fastener"
 	"clampback/planner/quantity"
+	"clampback/planner/table"
 )
 
 // VDI 2230-1 Table A5, friction classes (ids CV1209 to CV1212, seen in reprints).
@@ -30,7 +30,7 @@ func TestFrictionClasses(t *testing.T) {
 
 func TestUnknownConditionNamesTheKnown(t *testing.T) {
 	_, err := friction.FindCondition("class F")
-	var unknown *fastener.UnknownError
+	var unknown *table.UnknownError
 	require.ErrorAs(t, err, &unknown)
 	assert.Contains(t, unknown.Known, "class B")
 }

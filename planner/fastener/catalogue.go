@@ -3,6 +3,8 @@ package fastener
 import (
 	"fmt"
 	"strings"
+
+	"clampback/planner/table"
 )
 
 // catalogue holds the records of one table by designation and thread size.
@@ -31,7 +33,7 @@ func (c *catalogue[T]) add(kind string, diameter float64, record T) {
 	c.at[entry{kind, diameter}] = record
 }
 
-// find returns the record, an *UnknownError for an unknown designation, or a
+// find returns the record, a *table.UnknownError for an unknown designation, or a
 // plain error that names the sizes there are.
 func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
 	if record, found := c.at[entry{kind, t.Diameter}]; found {
@@ -40,7 +42,7 @@ func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
 	var none T
 	sizes, known := c.sizes[kind]
 	if !known {
-		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
+		return none, &table.UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
 	}
 	var names []string
 	for _, d := range sizes {
@@ -49,7 +51,7 @@ func (c *catalogue[T]) find(kind string, t Thread) (T, error) {
 		}
 	}
 	if len(names) == 0 {
-		return none, &UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
+		return none, &table.UnknownError{Kind: c.what, Name: kind, Known: c.kindsAt(t)}
 	}
 	return none, fmt.Errorf("no %s %q of size %s: the table has %s", c.what, kind, nominal(t.Diameter),
 		strings.Join(names, ", "))

@@ -5,29 +5,13 @@
 //
 // In: a designation as the trade writes it ("M12x1.25", "hexagon flange",
 // "10.9", "EN-GJL-250"). Out: plain dimensions in mm, N and MPa. It never
-// guesses: an unknown designation is an UnknownError that lists what is known.
+// guesses: an unknown designation is a table.UnknownError that lists what is known.
 //
 // A record that is Own comes from a user's own library and not from these tables:
 // only what it states is known of it, however its name reads.
 package fastener
 
-import (
-	"fmt"
-	"strings"
-)
-
-// UnknownError says that a designation is not in a table.
-type UnknownError struct {
-	Kind  string   // what was looked up: "thread", "material", ...
-	Name  string   // the designation that was asked for
-	Known []string // every designation of that kind, in table order
-}
-
-// Error names the kind and the designation; the known ones are left to the
-// caller, who knows how much room there is.
-func (e *UnknownError) Error() string {
-	return fmt.Sprintf("unknown %s %q", e.Kind, e.Name)
-}
+import "strings"
 
 // Head is a bolt head of one size, from its product standard.
 type Head struct {

@@ -8,6 +8,7 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"clampback/planner/internal/published"
+	"clampback/planner/table"
 )
 
 const (
@@ -90,7 +91,7 @@ func TestStrengthOfGrades(t *testing.T) {
 func TestClassesKeepToTheirThreads(t *testing.T) {
 	for class, thread := range map[string]string{"8.8": "1/2-13 UNC", "SAE grade 5": "M12", "A574": "M12"} {
 		_, err := FindClass(class, parse(t, thread))
-		var unknown *UnknownError
+		var unknown *table.UnknownError
 		require.ErrorAs(t, err, &unknown)
 		assert.NotContains(t, unknown.Known, class)
 		assert.Contains(t, unknown.Known, "A193 B7")
@@ -130,7 +131,7 @@ func TestInchParts(t *testing.T) {
 	_, err = FindHead("hexagon", parse(t, "2 1/2-8 UN"))
 	assert.ErrorContains(t, err, `no head "hexagon" of size 2 1/2 in: the table has 1/4 in`)
 	_, err = FindHead("hexagon flange", parse(t, "1/2-13 UNC"))
-	var unknown *UnknownError
+	var unknown *table.UnknownError
 	require.ErrorAs(t, err, &unknown)
 	assert.Equal(t, []string{"hexagon", "socket cap"}, unknown.Known)
 }

@@ -15,13 +15,13 @@ func FindClass(name string, t Thread) (PropertyClass, error) {
 	return classes().find(name, t)
 }
 
-// FindMaterial returns the material of that name, or an *UnknownError.
+// FindMaterial returns the material of that name, or a *table.UnknownError.
 func FindMaterial(name string) (Material, error) {
 	library := materials()
 	if m, found := library.byName[name]; found {
 		return m, nil
 	}
-	return Material{}, &UnknownError{Kind: "material", Name: name, Known: library.names}
+	return Material{}, &table.UnknownError{Kind: "material", Name: name, Known: library.names}
 }
 
 // MaterialNames returns the names of the library in table order; the slice is

@@ -115,7 +115,7 @@ func TestClassBandsAndLimits(t *testing.T) {
 
 	_, err = FindClass("9.8", parse(t, "M20"))
 	assert.EqualError(t, err, `no property class "9.8" of size M20: the table has M3, M3.5, M4, M5, M6, M7, M8, M10, M12, M14, M16`)
-	var unknown *UnknownError
+	var unknown *table.UnknownError
 	_, err = FindClass("8,8", parse(t, "M12"))
 	require.ErrorAs(t, err, &unknown)
 	assert.Equal(t, []string{"4.6", "4.8", "5.6", "5.8", "6.8", "8.8", "9.8", "10.9", "12.9"}, unknown.Known[:9])
@@ -287,7 +287,7 @@ func TestGreyIronIsOrdered(t *testing.T) {
 
 func TestUnknownMaterialListsAll(t *testing.T) {
 	_, err := FindMaterial("unobtainium")
-	var unknown *UnknownError
+	var unknown *table.UnknownError
 	require.ErrorAs(t, err, &unknown)
 	assert.Equal(t, MaterialNames(), unknown.Known)
 	assert.EqualError(t, err, `unknown material "unobtainium"`)

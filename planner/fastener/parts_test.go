@@ -8,6 +8,7 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"clampback/planner/internal/published"
+	"clampback/planner/table"
 )
 
 // tolerance returns the standard tolerance of ISO 286-1 Table 1, mm, for
@@ -300,11 +301,11 @@ func TestFineThreadStandards(t *testing.T) {
 
 func TestUnknownPartsTeach(t *testing.T) {
 	m12, m18, m64 := parse(t, "M12"), parse(t, "M18"), parse(t, "M64")
-	var unknown *UnknownError
+	var unknown *table.UnknownError
 
 	_, err := FindHead("hex", m12)
 	require.ErrorAs(t, err, &unknown)
-	assert.Equal(t, &UnknownError{"head", "hex", []string{"hexagon", "hexagon flange", "socket cap"}}, unknown)
+	assert.Equal(t, &table.UnknownError{Kind: "head", Name: "hex", Known: []string{"hexagon", "hexagon flange", "socket cap"}}, unknown)
 	assert.EqualError(t, err, `unknown head "hex"`)
 	_, err = FindNut("square", m12)
 	require.ErrorAs(t, err, &unknown)

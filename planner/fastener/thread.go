@@ -29,7 +29,7 @@ type Thread struct {
 // "M12x1.25" a fine one. X, × and blanks about the sign are read too, and the
 // coarse pitch may be written out. A size without that pitch is a plain error
 // that names the pitches there are; anything else that is not in ISO 261 from M3 to
-// M100 or ASME B1.1 is an *UnknownError. An inch designation may leave its series out
+// M100 or ASME B1.1 is a *table.UnknownError. An inch designation may leave its series out
 // where size and pitch say which it is.
 func ParseThread(designation string) (Thread, error) {
 	series := threads()
@@ -49,7 +49,7 @@ func ParseThread(designation string) (Thread, error) {
 		return Thread{}, fmt.Errorf("thread %s has no pitch %q: ISO 261 has %s", diameter, strings.TrimSpace(pitch),
 			strings.Join(pitches, ", "))
 	}
-	return Thread{}, &UnknownError{Kind: "thread", Name: designation, Known: series.names}
+	return Thread{}, &table.UnknownError{Kind: "thread", Name: designation, Known: series.names}
 }
 
 // multiplication maps the signs people write to the one ISO 965-1 prints.

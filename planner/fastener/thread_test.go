@@ -8,6 +8,7 @@ import (
 	"github.com/stretchr/testify/require"
 
 	"clampback/planner/internal/published"
+	"clampback/planner/table"
 )
 
 // metricSizes are the sizes of metric threads up to M64 among them, mm.
@@ -115,7 +116,7 @@ func TestParseThreadRefuses(t *testing.T) {
 	for _, bad := range []string{"", "M", "m12", "12", "M11", "M12.0", "M012", "1/2-14 UNC", "1/2", "#10", "M 12", "M1e1", "x",
 		"Mx1", "M2", "M65", "M\x00"} {
 		_, err := ParseThread(bad)
-		var unknown *UnknownError
+		var unknown *table.UnknownError
 		require.ErrorAs(t, err, &unknown, "%q", bad)
 		assert.Equal(t, "thread", unknown.Kind)
 		assert.Equal(t, bad, unknown.Name)

@@ -9,8 +9,8 @@ import (
 	"unicode/utf8"
 
 	"clampback/planner"
-	"clampback/planner/fastener"
 	"clampback/planner/quantity"
+	"clampback/planner/table"
 )
 
 // decoder reads values out of nodes and notes what is wrong with them. Every
@@ -186,7 +186,7 @@ func lookUp[T any](f field, find func(string) (T, error)) T {
 		return none
 	}
 	v, err := find(text)
-	var unknown *fastener.UnknownError
+	var unknown *table.UnknownError
 	switch {
 	case errors.Is(err, errUnread): // already a problem
 		f.lose()

@@ -7,6 +7,7 @@ import (
 	"clampback/planner"
 	"clampback/planner/fastener"
 	"clampback/planner/quantity"
+	"clampback/planner/table"
 )
 
 // jointKeys are the keys of a joint, and so of defaults.
@@ -112,7 +113,7 @@ func readHead(o *object, b *planner.Bolt) {
 	if hasHead {
 		b.Head = lookUp(o.at("head"), func(kind string) (fastener.Head, error) {
 			head, err := o.d.library.findHead(kind, b.Thread)
-			var unknown *fastener.UnknownError
+			var unknown *table.UnknownError
 			if errors.As(err, &unknown) {
 				unknown.Known = append(slices.Clone(unknown.Known), "stud")
 			}

@@ -7,13 +7,14 @@ import (
 	"clampback/planner"
 	"clampback/planner/fastener"
 	"clampback/planner/quantity"
+	"clampback/planner/table"
 )
 
 // inTable returns whether a table has a designation, for whatever thread.
 func inTable[T any](find func(string, fastener.Thread) (T, error)) func(name string) bool {
 	return func(name string) bool {
 		for _, t := range []fastener.Thread{{}, {Inch: true}} {
-			var unknown *fastener.UnknownError
+			var unknown *table.UnknownError
 			if _, err := find(name, t); !errors.As(err, &unknown) {
 				return true
 			}

@@ -7,6 +7,7 @@ import (
 	"strings"
 
 	"clampback/planner/fastener"
+	"clampback/planner/table"
 )
 
 // library is what the user's own libraries hold. The zero library is empty: only
@@ -73,8 +74,8 @@ func (s *shelf[T]) has(name string) bool { return len(s.threads[name]) > 0 }
 var errUnread = errors.New("a library could not be read")
 
 // find returns the entry of that name, else what the program's table has. The error is
-// errUnread, an *fastener.UnknownError that knows the entries too, or a plain one.
-func (s *shelf[T]) find(l label, table func(name string) (T, error)) (T, error) {
+// errUnread, a *table.UnknownError that knows the entries too, or a plain one.
+func (s *shelf[T]) find(l label, tables func(name string) (T, error)) (T, error) {
 	var none T
 	if i, found := s.items[l]; found {
 		if !i.sound {
@@ -82,8 +83,8 @@ func (s *shelf[T]) find(l label, table func(name string) (T, error)) (T, error) 
 		}
 		return i.value, nil
 	}
-	v, err := table(l.name)
-	var unknown *fastener.UnknownError
+	v, err := tables(l.name)
+	var unknown *table.UnknownError
 	switch {
 	case err == nil:
 		return v, nil
@@ -95,7 +96,7 @@ func (s *shelf[T]) find(l label, table func(name string) (T, error)) (T, error) 
 		return none, fmt.Errorf("no %s %q for %s: your library has it for %s", unknown.Kind, l.name, l.thread,
 			strings.Join(s.threads[l.name], ", "))
 	}
-	return none, &fastener.UnknownError{Kind: unknown.Kind, Name: unknown.Name, Known: slices.Concat(s.names, unknown.Known)}
+	return none, &table.UnknownError{Kind: unknown.Kind, Name: unknown.Name, Known: slices.Concat(s.names, unknown.Known)}
 }
 
 func (l *library) findThread(name string) (fastener.Thread, error) {
