@@ -3,6 +3,8 @@ package planner
 import (
 	"math"
 	"strconv"
+
+	"clampback/planner/fastener"
 )
 
 // residual works out the clamp force that the setting leaves in service. The
@@ -143,6 +145,11 @@ func (w *work) checkNut() {
 	w.input("k_nut", "property class of the nut", have, "-", stated)
 	w.input("k_bolt", "least property class of a nut for the bolt", need, "-", "ISO 898-2")
 	w.atLeast("nut class", have, need, "-", "ISO 898-2")
+	if stress, known := fastener.NutProofStress(j.NutClass, j.Bolt.Thread); known && j.Nut.Kind == "hexagon" && !j.Nut.Own {
+		w.input("S_pN", "proof stress of the nut", stress, "MPa", "ISO 898-2")
+		load := w.line("F_pN", "proof load of the nut", stress*w.thread.stressArea, "N", "ISO 898-2")
+		w.atMost("nut proof load", w.largest, load, "N", "ISO 898-2")
+	}
 }
 
 // checkShear checks what carries the transverse load if the joint should slip: the

@@ -1,5 +1,7 @@
 package planner
 
+import "clampback/planner/fastener"
+
 // nuts judges what is stated of nuts besides their size.
 func (v *validator) nuts(j Joint) {
 	v.positiveOrNone(j.NutShear, pressures, at("nut.shear_strength"), "the shear strength of the nut", "state it, for example 450 MPa")
@@ -7,6 +9,10 @@ func (v *validator) nuts(j Joint) {
 		"a lock nut is stated, but there is no nut")
 	v.require(j.LockNut == nil || j.HeadNut == nil, at("nut.lock", "bolt.head"), "state a bolt with a head, or leave the lock nut out",
 		"a lock nut on a stud is not planned")
+	for _, n := range []*fastener.Nut{j.Nut, j.HeadNut} {
+		v.require(n == nil || n.Kind != "hexagon thin", at("nut"), "state nut: {kind: hexagon, lock: hexagon thin}, or another nut",
+			"a thin nut alone does not carry the bolt: its thread strips first (ISO 4035)")
+	}
 	for _, nut := range []struct {
 		stated bool
 		size   float64

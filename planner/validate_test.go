@@ -71,6 +71,7 @@ func TestImpossibleIdentityAndPattern(t *testing.T) {
 
 func TestImpossibleBolt(t *testing.T) {
 	checkSpoils(t, flange, []spoil{
+		{"thin nut alone", func(j *planner.Joint) { j.Nut.Kind = "hexagon thin" }, "nut", "a thin nut alone does not carry the bolt"},
 		{"no length", func(j *planner.Joint) { j.Bolt.Length = 0 }, "bolt.length", "the bolt's length is 0 mm"},
 		{"not reaching", func(j *planner.Joint) { j.Bolt.Length = 38 }, "bolt.length",
 			"the grip of 38 mm is longer than the bolt of 38 mm"},
