@@ -195,6 +195,9 @@ func (w *work) assumeLoading() {
 	} else {
 		w.assumed("loaded and clamped concentrically; loads need no further factor")
 	}
+	if reach := j.coneReach(); j.SmallestOuterDiameter() > 2*reach {
+		w.assumed(fmt.Sprintf("the parts are stated %.4g mm wide, the pressure cone reaches %.4g mm: the guideline's cone angle grows with the stated width, so state what the parts offer around one bolt", j.SmallestOuterDiameter(), reach))
+	}
 	switch {
 	case len(j.GroupLoads) > 0:
 		w.assumed("rigid plates share the loads on the joint over bolts of equal stiffness (VDI 2230-2): where the plates bend, state bolt forces of a finite-element run")
@@ -204,6 +207,15 @@ func (w *work) assumeLoading() {
 	if len(j.Group) > 0 && j.Loads.cyclic() {
 		w.assumed("each bolt swings between its load cases, and the unloaded joint")
 	}
+}
+
+// coneReach returns D_A,Gr, how wide the pressure cones grow in the grip, mm.
+func (j Joint) coneReach() float64 {
+	c := j.body().Cones()
+	if c.Tapped {
+		return c.HeadBearing + 2*c.Length*c.Tangent
+	}
+	return c.MeanBearing() + c.Length*c.Tangent
 }
 
 // bearingOfNut returns d_W at the far end; that of the head where there is no nut.
