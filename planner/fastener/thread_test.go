@@ -159,3 +159,13 @@ func FuzzParseThread(f *testing.F) {
 		}
 	})
 }
+
+// Stress areas of the large sizes with a pitch of 6 mm, as handbooks print them, mm2
+// (from memory, after DIN 13-28): three figures.
+func TestStressAreaOfLargeSizes(t *testing.T) {
+	for designation, area := range map[string]float64{
+		"M68": 3060, "M72": 3460, "M72x6": 3460, "M76": 3890, "M80x6": 4340, "M90": 5590, "M100": 6990,
+	} {
+		assert.InEpsilon(t, area, parse(t, designation).StressArea(), 0.002, designation)
+	}
+}
