@@ -66,19 +66,11 @@ func (w *work) failures() []string {
 		if c.AtLeast {
 			verb = "does not reach"
 		}
-		all = append(all, fmt.Sprintf("%s: %s %s %s %s %s", c.Name, plain(c.Value), c.Unit, verb, plain(c.Limit), c.Unit))
+		all = append(all, fmt.Sprintf("%s: %s %s %s %s %s", c.Name, quantity.Plain(c.Value), c.Unit, verb, quantity.Plain(c.Limit), c.Unit))
 	}
 	if w.snugTooHigh() {
 		all = append(all, fmt.Sprintf("snug torque: %.4g N.m is not below the target torque %.4g N.m", w.snug/1000,
 			w.torque/1000))
 	}
 	return all
-}
-
-// plain prints a number with 4 significant digits and no exponent.
-func plain(v float64) string {
-	if math.Abs(v) >= 1000 {
-		return fmt.Sprintf("%.0f", v)
-	}
-	return fmt.Sprintf("%.4g", v)
 }

@@ -5,7 +5,6 @@ import (
 	"fmt"
 	"io"
 	"iter"
-	"math"
 	"strings"
 
 	"clampback/planner"
@@ -32,7 +31,7 @@ func WriteText(w io.Writer, plans iter.Seq2[planner.Plan, error], o TextOptions)
 		if p.Feasible {
 			feasible++
 		}
-		heading := p.Joint.Assembly + ", revision " + orNotStated(p.Joint.Revision)
+		heading := p.Joint.Assembly + ", revision " + OrNotStated(p.Joint.Revision)
 		if heading != assembly {
 			t.printf("%s\n", heading)
 			assembly = heading
@@ -206,7 +205,7 @@ func (t *text) checks(p planner.Plan) {
 		if c.AtLeast {
 			relation = ">="
 		}
-		t.printf("    %-50s %8s %s %8s %-4s %5.0f %%  %s\n", c.Name, Plain(c.Value), relation, Plain(c.Limit), c.Unit,
+		t.printf("    %-50s %8s %s %8s %-4s %5.0f %%  %s\n", c.Name, quantity.Plain(c.Value), relation, quantity.Plain(c.Limit), c.Unit,
 			100*c.Utilisation, verdict)
 	}
 }
@@ -245,18 +244,8 @@ func (t *text) mark(s, colour string) string {
 	return colour + s + plain
 }
 
-// Plain prints a number with 4 significant digits and without an exponent, as
-// long as it is of a size that people read.
-func Plain(v float64) string {
-	switch size := math.Abs(v); {
-	case size >= 1000 && size < 1e12:
-		return fmt.Sprintf("%.0f", v)
-	default:
-		return fmt.Sprintf("%.4g", v)
-	}
-}
-
-func orNotStated(s string) string {
+// OrNotStated returns a text, or says that there is none.
+func OrNotStated(s string) string {
 	if s == "" {
 		return "not stated"
 	}

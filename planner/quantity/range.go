@@ -1,7 +1,5 @@
 package quantity
 
-import "math"
-
 // Range is a closed interval of one quantity, Low <= High. A single value is a
 // range of no width. The unit is that of the field that holds the range.
 type Range struct {
@@ -20,8 +18,3 @@ func (r Range) Middle() float64 { return r.Low + r.Width()/2 }
 
 // IsSingle reports whether the range has no width.
 func (r Range) IsSingle() bool { return r.Low == r.High }
-
-// IsFinite reports whether both ends are finite numbers.
-func (r Range) IsFinite() bool {
-	return !math.IsNaN(r.Low) && !math.IsInf(r.Low, 0) && !math.IsNaN(r.High) && !math.IsInf(r.High, 0)
-}

@@ -78,3 +78,12 @@ func short(v float64) string {
 	}
 	return Trim(v)
 }
+
+// Plain prints a number with 4 significant digits and without an exponent, as long
+// as it is of a size that people read.
+func Plain(v float64) string {
+	if size := math.Abs(v); size >= 1000 && size < 1e12 {
+		return strconv.FormatFloat(v, 'f', 0, 64)
+	}
+	return strconv.FormatFloat(v, 'g', 4, 64)
+}

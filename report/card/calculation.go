@@ -6,7 +6,6 @@ import (
 	"clampback/planner"
 	"clampback/planner/quantity"
 	"clampback/planner/stiffness"
-	"clampback/report"
 	"clampback/report/figure"
 )
 
@@ -162,7 +161,7 @@ func (d *document) checkTable(p planner.Plan) []block {
 		if c.AtLeast {
 			relation = "≥ "
 		}
-		blocks = append(blocks, d.checkRow([...]string{c.Name, report.Plain(c.Value), relation + report.Plain(c.Limit),
+		blocks = append(blocks, d.checkRow([...]string{c.Name, quantity.Plain(c.Value), relation + quantity.Plain(c.Limit),
 			c.Unit, fmt.Sprintf("%.0f %%", c.Utilisation*100), verdict}, face))
 	}
 	blocks[len(blocks)-1].tight = false

@@ -83,7 +83,7 @@ func (b *book) writeCalculation(c *calculation, index int) error {
 
 	rows := [][]any{
 		{cell(s.title, clean(c.plan.ID+"  "+c.plan.Name))},
-		{cell(0, clean(j.Assembly+", revision "+orNone(j.Revision)+", prepared by "+orNone(j.PreparedBy)))},
+		{cell(0, clean(j.Assembly+", revision "+report.OrNotStated(j.Revision)+", prepared by "+report.OrNotStated(j.PreparedBy)))},
 		{cell(0, clean(report.Fasteners(j)))},
 		{cell(s.bold, "Verdict"), nil, formula(s.warning, c.verdictFormula(checksFrom, checksTo),
 			verdictWord(c.plan.Feasible))},
@@ -144,13 +144,6 @@ func (c *calculation) line(symbol string) (planner.Line, bool) {
 		return planner.Line{}, false
 	}
 	return c.plan.Trace[i], true
-}
-
-func orNone(s string) string {
-	if s == "" {
-		return "not stated"
-	}
-	return s
 }
 
 // placeSymbols says in which cell each symbol's value stands.

@@ -6,6 +6,7 @@ import (
 	"github.com/xuri/excelize/v2"
 
 	"clampback/planner"
+	"clampback/report"
 )
 
 // page is how a sheet prints.
@@ -36,7 +37,7 @@ func (b *book) openSheet(name string, index int, p page, widths []float64) (*exc
 	if err := f.SetSheetProps(name, &excelize.SheetPropsOptions{FitToPage: &fit}); err != nil {
 		return nil, err
 	}
-	title := cut(clean(p.head.Assembly+", revision "+orNone(p.head.Revision)), 100)
+	title := cut(clean(p.head.Assembly+", revision "+report.OrNotStated(p.head.Revision)), 100)
 	title = strings.ReplaceAll(title, "&", "&&") // & begins a code of the header
 	if err := f.SetHeaderFooter(name, &excelize.HeaderFooterOptions{OddHeader: "&L" + title + "&R&A",
 		OddFooter: "&LCalculated, not tested&RPage &P of &N"}); err != nil {

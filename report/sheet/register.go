@@ -51,7 +51,7 @@ var columns = []column{
 		return formula(b.styles.verdict, quoted(c.sheet)+"!"+c.verdict, verdictWord(c.plan.Feasible))
 	}},
 	{"revision", 9, func(b *book, c *calculation) any {
-		return cell(b.styles.wrapped, clean(orNone(c.plan.Joint.Revision)))
+		return cell(b.styles.wrapped, clean(report.OrNotStated(c.plan.Joint.Revision)))
 	}},
 }
 
@@ -125,7 +125,7 @@ func (b *book) writeRegister(calculations []calculation) error {
 	w := &writer{stream, 1}
 	rows := [][]any{
 		{cell(b.styles.title, "Joint register")},
-		{cell(0, clean(h.Assembly+", revision "+orNone(h.Revision)+", prepared by "+orNone(h.PreparedBy)))},
+		{cell(0, clean(h.Assembly+", revision "+report.OrNotStated(h.Revision)+", prepared by "+report.OrNotStated(h.PreparedBy)))},
 		{cell(0, "Limits are rounded inwards. For torque and angle the setting is the angle; its torques are those to expect at the end. "+caution)},
 		{},
 		heading,
