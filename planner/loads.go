@@ -41,8 +41,10 @@ func (w *work) operate() {
 	w.pick(rows, g.clamp, "required preload")
 	w.pick(rows, g.highest, "highest axial load")
 	w.pick(rows, g.lowest, "lowest axial load")
-	w.pick(rows, g.swingHigh, "fatigue, upper end")
-	w.pick(rows, g.swingLow, "fatigue, lower end")
+	w.pick(rows, g.swingHigh, "fatigue")
+	if g.swingLow != g.swingHigh {
+		w.pick(rows, g.swingLow, "fatigue, lower end")
+	}
 	w.pick(rows, g.transverse, "highest transverse load")
 	at := func(symbol, meaning, rule string, share int, value float64) float64 {
 		w.trace = append(w.trace, Line{Symbol: symbol, Meaning: meaning, Value: value, Unit: "N",
@@ -132,11 +134,13 @@ func (w *work) governing() governingShares {
 			g.swingHigh, g.swingLow = b.high, b.low
 		}
 	}
+	// Where one end is the unloaded joint, the row of the other end gives it: no load of
+	// that bolt is beyond 0 there.
 	if g.swingHigh < 0 {
-		g.swingHigh = g.highest // compression only: its upper end is the unloaded joint
+		g.swingHigh = max(g.swingLow, 0)
 	}
 	if g.swingLow < 0 {
-		g.swingLow = g.lowest
+		g.swingLow = g.swingHigh
 	}
 	return g
 }

@@ -56,8 +56,24 @@ func TestNoBoltOfAGroupNeedsMore(t *testing.T) {
 		require.InDelta(t, high, math.Max(0, line(t, p, "F_A_max")), 1e-6)
 		require.InDelta(t, low, line(t, p, "F_A_min"), 1e-6)
 		require.InDelta(t, across, line(t, p, "F_Q_max"), 1e-6)
+		require.InDelta(t, widestSwing(j), line(t, p, "F_A_o")-line(t, p, "F_A_u"), 1e-6)
 		require.NotEmpty(t, p.Governing)
 	})
+}
+
+// widestSwing is the largest range of one bolt over its load cases and no load.
+func widestSwing(j planner.Joint) float64 {
+	var widest float64
+	for bolt := 1; bolt <= j.Count; bolt++ {
+		var high, low float64
+		for _, s := range j.Group {
+			if s.Bolt == bolt {
+				high, low = math.Max(high, s.Axial), math.Min(low, s.Axial)
+			}
+		}
+		widest = math.Max(widest, high-low)
+	}
+	return widest
 }
 
 // A textbook bolt circle under a moment: the bolt furthest out gets 4 M/(n D), and the

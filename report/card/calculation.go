@@ -2,6 +2,7 @@ package card
 
 import (
 	"fmt"
+	"strconv"
 
 	"clampback/planner"
 	"clampback/planner/quantity"
@@ -29,6 +30,9 @@ func (d *document) calculation(p planner.Plan) []block {
 		blocks = append(blocks, d.fatigue(p, f))
 	}
 	blocks = append(blocks, d.flow(say("calc_binds"), plainItems(p.Binds), d.small())...)
+	if who := d.governing(p); len(who) > 0 {
+		blocks = append(blocks, d.flow(say("calc_governs"), plainItems(who), d.small())...)
+	}
 	blocks = append(blocks, d.twoLists(p))
 	blocks = append(blocks, d.checkTable(p)...)
 	return append(blocks, d.flow(say("calc_assumptions"), plainItems(p.Assumptions), d.small())...)
@@ -184,4 +188,14 @@ func (d *document) checkRow(cells [6]string, t figure.Type) block {
 		d.canvas.Text(x+0.89*w, base, cells[4], end)
 		d.canvas.Text(x+0.91*w, base, cells[5], t)
 	}}
+}
+
+// governing says which bolt in which load case decides what; nothing where the loads
+// are those of one bolt.
+func (d *document) governing(p planner.Plan) []string {
+	var who []string
+	for _, g := range p.Governing {
+		who = append(who, d.words.say("calc_governing", "what", g.For, "bolt", strconv.Itoa(g.Bolt), "case", g.Case))
+	}
+	return who
 }
