@@ -41,8 +41,10 @@ func (w *work) operate() {
 	w.pick(rows, g.clamp, "required preload")
 	w.pick(rows, g.highest, "highest axial load")
 	w.pick(rows, g.lowest, "lowest axial load")
-	w.pick(rows, g.swingHigh, "fatigue")
-	if g.swingLow != g.swingHigh {
+	if j.Loads.cyclic() {
+		w.pick(rows, g.swingHigh, "fatigue")
+	}
+	if j.Loads.cyclic() && g.swingLow != g.swingHigh {
 		w.pick(rows, g.swingLow, "fatigue, lower end")
 	}
 	w.pick(rows, g.transverse, "highest transverse load")
