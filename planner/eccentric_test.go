@@ -141,3 +141,14 @@ func TestImpossibleEccentric(t *testing.T) {
 		{"all hole", func(j *planner.Joint) { j.Eccentric.Width = 13 }, "eccentric.depth", "is no larger than the hole"},
 	})
 }
+
+// The mean bolt force of a thread rolled after heat treatment holds what a working
+// moment adds: F_Sm = F_Mmax + (Phi (F_A,max + F_A,min) + Phi_m (M_max + M_min))/2.
+func TestMeanForceHoldsTheMoment(t *testing.T) {
+	j := lever(t, 2, 15)
+	j.Bolt.RolledAfter, j.Loads.Cycles = true, 2e6
+	j.Eccentric.MomentHigh = 40000
+	p := work(t, j)
+	mean := p.Preload.Highest + (p.Stiffness.LoadFactor*9500+line(t, p, "Phi_m")*40000)/2
+	assert.InEpsilon(t, mean/(940*line(t, p, "A_0")), line(t, p, "r_Sm"), 1e-12)
+}

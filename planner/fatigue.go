@@ -88,9 +88,14 @@ func (b Bolt) rolled() string {
 	return "before heat treatment"
 }
 
-// meanForce is F_Sm, the mean bolt force at the highest preload, with what heat adds.
+// meanForce is F_Sm, the mean bolt force at the highest preload, with what heat and a working
+// moment add.
 func (w *work) meanForce() float64 {
-	return w.highest + w.thermalGain + w.loadFactor*(w.axial.swingHi+w.axial.swingLo)/2
+	var moment float64
+	if e := w.joint.Eccentric; e != nil {
+		moment = e.MomentHigh + e.MomentLow
+	}
+	return w.highest + w.thermalGain + (w.loadFactor*(w.axial.swingHi+w.axial.swingLo)+w.momentFactor*moment)/2
 }
 
 // yielding is F_0.2min over the stress area, MPa: of a waisted bolt below R_p0.2.
